@@ -21,7 +21,7 @@ export type JsonPrimitive = boolean | number | string | null;
 
 export type JsonValue = JsonArray | JsonObject | JsonPrimitive;
 
-export type Numeric = ColumnType<string, number | string, number | string>;
+export type Numeric = ColumnType<number, number | string, number | string>;
 
 export type Timestamp = ColumnType<Date, Date | string, Date | string>;
 
@@ -142,6 +142,7 @@ export interface Event {
   data: Generated<Json>;
   id: Generated<number>;
   kind: string;
+  note_digest: Buffer | null;
   recorded_at: Generated<Timestamp>;
   salt: Buffer;
   subject: string;

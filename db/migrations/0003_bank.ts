@@ -1,0 +1,71 @@
+import { type Kysely, sql } from 'kysely';
+
+/** Templates, their unchangeable versions, checks and reviews. */
+export async function up(db: Kysely<unknown>): Promise<void> {
+  await sql`create table template (
+    id uuid primary key default gen_random_uuid(),
+    slug text not null unique,
+    state text not null default 'draft' check (state in ('draft', 'in review', 'approved', 'retired')),
+    -- The working text, always kept as typed, even when it does not parse.
+    text text not null,
+    revision integer not null default 1,
+    title text not null,
+    area text not null default '',
+    level integer,
+    minutes numeric(5,1),
+    marks integer,
+    kinds text[] not null default '{}',
+    cautions text[] not null default '{}',
+    owner_id uuid references account,
+    changed_by uuid references account,
+    changed_at timestamptz not null default app.now(),
+    created_at timestamptz not null default app.now()
+  )`.execute(db);
+  await sql`create table template_version (
+    id uuid primary key default gen_random_uuid(),
+    template_id uuid not null references template,
+    number integer not null,
+    text text not null,
+    -- SHA-256 of text, tables, cautions, figures and engine: what an old paper is rebuilt from.
+    digests jsonb not null,
+    engine text not null,
+    title text not null,
+    area text not null,
+    level integer not null,
+    minutes numeric(5,1) not null,
+    marks integer not null,
+    kinds text[] not null,
+    author_id uuid not null references account,
+    made_at timestamptz not null default app.now(),
+    unique (template_id, number)
+  )`.execute(db);
+  await sql`create trigger unchangeable before update or delete on template_version for each row execute function app.refuse_change()`.execute(db);
+  await sql`revoke update, delete, truncate on template_version from fullfield_app`.execute(db);
+  // in review -> approved | returned; an approved one is later retired or replaced by the next.
+  await sql`create table template_review (
+    version_id uuid primary key references template_version,
+    asked_by uuid not null references account,
+    asked_at timestamptz not null default app.now(),
+    verdict text check (verdict in ('approved', 'returned')),
+    decided_by uuid references account,
+    decided_at timestamptz,
+    note text not null default '',
+    retired_at timestamptz,
+    check ((verdict is null) = (decided_by is null)),
+    check (decided_by is null or decided_by <> asked_by)
+  )`.execute(db);
+  await sql`create table template_check (
+    id uuid primary key default gen_random_uuid(),
+    template_id uuid not null references template,
+    text_digest text not null,
+    text text not null,
+    draws integer not null,
+    done integer not null default 0,
+    state text not null default 'queued' check (state in ('queued', 'running', 'in order', 'problems', 'cancelled', 'failed')),
+    report jsonb,
+    asked_by uuid references account,
+    asked_at timestamptz not null default app.now(),
+    ended_at timestamptz
+  )`.execute(db);
+  await sql`create index template_check_template on template_check (template_id, asked_at desc)`.execute(db);
+}
