@@ -442,6 +442,7 @@ export interface Template {
   state: Generated<string>;
   text: string;
   title: string;
+  writers: Generated<string[]>;
 }
 
 export interface TemplateCheck {
@@ -452,6 +453,7 @@ export interface TemplateCheck {
   ended_at: Timestamp | null;
   id: Generated<string>;
   report: Json | null;
+  says: Generated<string>;
   state: Generated<string>;
   template_id: string;
   text: string;
@@ -484,6 +486,7 @@ export interface TemplateVersion {
   template_id: string;
   text: string;
   title: string;
+  writers: string[];
 }
 
 export interface Term {

@@ -17,6 +17,8 @@ export async function up(db: Kysely<unknown>): Promise<void> {
     kinds text[] not null default '{}',
     cautions text[] not null default '{}',
     owner_id uuid references account,
+    -- Everybody who saved a text since the last approval: none of them may approve it.
+    writers uuid[] not null default '{}',
     changed_by uuid references account,
     changed_at timestamptz not null default app.now(),
     created_at timestamptz not null default app.now()
@@ -36,6 +38,7 @@ export async function up(db: Kysely<unknown>): Promise<void> {
     marks integer not null,
     kinds text[] not null,
     author_id uuid not null references account,
+    writers uuid[] not null,
     made_at timestamptz not null default app.now(),
     unique (template_id, number)
   )`.execute(db);
@@ -46,23 +49,25 @@ export async function up(db: Kysely<unknown>): Promise<void> {
     version_id uuid primary key references template_version,
     asked_by uuid not null references account,
     asked_at timestamptz not null default app.now(),
-    verdict text check (verdict in ('approved', 'returned')),
+    verdict text check (verdict in ('approved', 'returned', 'taken back')),
     decided_by uuid references account,
     decided_at timestamptz,
     note text not null default '',
     retired_at timestamptz,
     check ((verdict is null) = (decided_by is null)),
-    check (decided_by is null or decided_by <> asked_by)
+    check (verdict is null or verdict = 'taken back' or decided_by <> asked_by)
   )`.execute(db);
   await sql`create table template_check (
     id uuid primary key default gen_random_uuid(),
     template_id uuid not null references template,
+    -- SHA-256 of the text with the tables, cautions and engine it was checked with.
     text_digest text not null,
     text text not null,
     draws integer not null,
     done integer not null default 0,
     state text not null default 'queued' check (state in ('queued', 'running', 'in order', 'problems', 'cancelled', 'failed')),
     report jsonb,
+    says text not null default '',
     asked_by uuid references account,
     asked_at timestamptz not null default app.now(),
     ended_at timestamptz
