@@ -189,7 +189,7 @@ export interface Form {
   digest: string;
   exam_id: string;
   id: Generated<string>;
-  marks: number;
+  marks: Numeric;
   minutes: number;
   number: number;
   title: string;
@@ -434,7 +434,7 @@ export interface Template {
   id: Generated<string>;
   kinds: Generated<string[]>;
   level: number | null;
-  marks: number | null;
+  marks: Numeric | null;
   minutes: Numeric | null;
   owner_id: string | null;
   revision: Generated<number>;
@@ -461,6 +461,7 @@ export interface TemplateCheck {
 }
 
 export interface TemplateReview {
+  ask_note: Generated<string>;
   asked_at: Generated<Timestamp>;
   asked_by: string;
   decided_at: Timestamp | null;
@@ -480,7 +481,7 @@ export interface TemplateVersion {
   kinds: string[];
   level: number;
   made_at: Generated<Timestamp>;
-  marks: number;
+  marks: Numeric;
   minutes: Numeric;
   number: number;
   template_id: string;
