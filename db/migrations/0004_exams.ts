@@ -22,7 +22,8 @@ export async function up(db: Kysely<unknown>): Promise<void> {
     number integer not null,
     title text not null,
     content jsonb not null,
-    marks integer not null,
+    marks numeric(7,1) not null,
+    -- Time allowed.
     minutes integer not null,
     approved_by uuid not null references account,
     approved_at timestamptz not null default app.now(),

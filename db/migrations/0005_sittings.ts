@@ -93,9 +93,18 @@ export async function up(db: Kysely<unknown>): Promise<void> {
     draw jsonb not null,
     primary key (candidate_id, question)
   )`.execute(db);
+  // A paper nobody has seen may be discarded: the sitting is still planned. After that it never changes.
+  await sql`create function app.keep_paper() returns trigger language plpgsql as $$
+    begin
+      if tg_op = 'DELETE' and exists (
+        select from candidate c join sitting s on s.id = c.sitting_id
+        where c.id = old.candidate_id and c.admitted_at is null and s.state = 'planned'
+      ) then return old; end if;
+      raise exception '% is unchangeable once check-in is open', tg_table_name using errcode = 'integrity_constraint_violation';
+    end $$`.execute(db);
   for (const table of ['paper', 'paper_key']) {
-    await sql`create trigger unchangeable before update or delete on ${sql.table(table)} for each row execute function app.refuse_change()`.execute(db);
-    await sql`revoke update, delete, truncate on ${sql.table(table)} from fullfield_app`.execute(db);
+    await sql`create trigger unchangeable before update or delete on ${sql.table(table)} for each row execute function app.keep_paper()`.execute(db);
+    await sql`revoke update, truncate on ${sql.table(table)} from fullfield_app`.execute(db);
   }
 
   // Every revision is kept. The last sequence of a part counts, in whatever order they arrive.
