@@ -180,6 +180,7 @@ export interface Exam {
   revision: Generated<number>;
   state: Generated<string>;
   title: string;
+  writers: Generated<string[]>;
 }
 
 export interface Form {

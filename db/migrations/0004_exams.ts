@@ -12,6 +12,8 @@ export async function up(db: Kysely<unknown>): Promise<void> {
     owner_id uuid not null references account,
     review_asked_by uuid references account,
     review_note text not null default '',
+    -- Who wrote on it since its last approval: none of them may approve it.
+    writers uuid[] not null default '{}',
     changed_by uuid not null references account,
     changed_at timestamptz not null default app.now(),
     created_at timestamptz not null default app.now()
