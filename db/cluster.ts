@@ -52,7 +52,7 @@ const asPostgres = (command: string, args: string[]): [string, string[]] =>
 function runQuietly(command: string, args: string[], folder: string): Promise<number> {
   const [program, all] = asPostgres(command, args);
   return new Promise((resolve, reject) => {
-    const child = spawn(program, all, { cwd: folder, stdio: 'ignore', env: { PATH: process.env.PATH, LC_ALL: 'C.UTF-8' } as NodeJS.ProcessEnv });
+    const child = spawn(program, all, { cwd: folder, stdio: 'ignore', env: { ...process.env, LC_ALL: 'C.UTF-8' } });
     child.on('error', reject);
     child.on('exit', (code) => resolve(code ?? 1));
   });
@@ -61,7 +61,7 @@ function runQuietly(command: string, args: string[], folder: string): Promise<nu
 function run(command: string, args: string[], folder: string): Promise<string> {
   const [program, all] = asPostgres(command, args);
   return new Promise((resolve, reject) => {
-    execFile(program, all, { cwd: folder, env: { PATH: process.env.PATH, LC_ALL: 'C.UTF-8' } as NodeJS.ProcessEnv }, (error, stdout, stderr) =>
+    execFile(program, all, { cwd: folder, env: { ...process.env, LC_ALL: 'C.UTF-8' } }, (error, stdout, stderr) =>
       error ? reject(new Error(`${path.basename(command)}: ${(stderr || error.message).trim()}`)) : resolve(stdout),
     );
   });

@@ -195,6 +195,6 @@ export async function up(db: Kysely<unknown>): Promise<void> {
   await sql`grant select (id, form_id, title, room, state, opens_at, starts_at, latest_start_at, minutes, locale, started_at, paused_at, closed_at)
     on sitting to fullfield_candidate`.execute(db);
   await sql`grant insert on response, claim, candidate_flag to fullfield_candidate`.execute(db);
-  await sql`grant select on claim to fullfield_candidate`.execute(db);
+  await sql`grant select on claim, help_call to fullfield_candidate`.execute(db);
   await sql`grant update (sequence, flagged) on candidate_flag to fullfield_candidate`.execute(db);
 }
