@@ -14,7 +14,8 @@ export async function installQueue<Schema>(owner: Kysely<Schema>, url: string): 
       name text, payload json, job_key text, queue_name text, run_at timestamptz, max_attempts integer, priority integer
     ) returns bigint language sql security definer set search_path = graphile_worker, pg_temp as $$
       select (graphile_worker.add_job(
-        identifier => name, payload => payload, queue_name => queue_name, run_at => run_at, max_attempts => max_attempts,
+        identifier => name, payload => payload, queue_name => queue_name,
+        run_at => run_at - (select clock_shift from app.installation), max_attempts => max_attempts,
         job_key => job_key, priority => priority, job_key_mode => 'replace'
       )).id
     $$`.execute(owner);

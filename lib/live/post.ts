@@ -1,0 +1,44 @@
+import { type Kysely, sql } from 'kysely';
+import { candidateDb } from '@/db/client';
+import type { DB } from '@/db/types';
+import { channel } from './listener';
+
+/** At most four a second for one sitting from one process: every NOTIFY takes a lock of the whole database at commit. */
+const gap = 250;
+
+type Pending = { last: number; timer: NodeJS.Timeout | undefined };
+const shared = globalThis as typeof globalThis & { fullfieldPosts?: Map<string, Pending> };
+
+export const sittingTopic = (sittingId: string): string => `sitting:${sittingId}`;
+
+async function notify(topic: string): Promise<void> {
+  // A lost message is made good by the streams' own reading anew.
+  await sql`select pg_notify(${channel}, ${topic})`.execute(candidateDb()).catch(() => undefined);
+}
+
+/**
+ * Tells every process that something about the sitting changed, soon and not too often. Call it after the commit;
+ * it returns at once. Posts within the gap fall together into one at its end.
+ */
+export function postChange(sittingId: string): void {
+  const posts = (shared.fullfieldPosts ??= new Map<string, Pending>());
+  const topic = sittingTopic(sittingId);
+  const now = performance.now();
+  const pending = posts.get(topic) ?? { last: -gap, timer: undefined };
+  posts.set(topic, pending);
+  if (pending.timer) return;
+  const wait = Math.max(0, pending.last + gap - now);
+  pending.timer = setTimeout(() => {
+    pending.timer = undefined;
+    pending.last = performance.now();
+    void notify(topic);
+    setTimeout(() => {
+      if (!pending.timer && posts.get(topic) === pending) posts.delete(topic);
+    }, gap).unref();
+  }, wait);
+}
+
+/** The same inside a transaction, for what a proctor does: it goes out with the commit. */
+export async function postChangeIn(db: Kysely<DB>, sittingId: string): Promise<void> {
+  await sql`select pg_notify(${channel}, ${sittingTopic(sittingId)})`.execute(db);
+}
