@@ -188,6 +188,7 @@ export async function up(db: Kysely<unknown>): Promise<void> {
   )`.execute(db);
 
   // What a candidate's requests may touch, and nothing else.
+  await sql`grant select (settings) on school to fullfield_candidate`.execute(db);
   await sql`grant select on sitting_event, paper, response, candidate_flag, form to fullfield_candidate`.execute(db);
   await sql`grant select (id, sitting_id, account_id, seat, state, epoch, device, seconds_allowed, need, rest_seconds_allowed, rest_seconds_used,
     rest_began_at, admitted_at, declared_at, started_at, ends_at, seconds_left, ended_at, answered, heard_at) on candidate to fullfield_candidate`.execute(db);

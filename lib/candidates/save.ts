@@ -10,7 +10,7 @@ type SaveRow = { now: Date; open: boolean; saved: { question: number; part: stri
  * so nothing is asked before it. Sending a revision again is no error and stores nothing twice. `db` is the candidate's role.
  * The row is read FOR SHARE: a hand-in that goes on at the same moment waits, so no save slips in behind it.
  */
-export async function saveResponses(db: Kysely<DB>, seat: Seat, revisions: readonly Revision[], graceSeconds: number): Promise<SaveOutcome> {
+export async function saveResponses(db: Kysely<DB>, seat: Seat, revisions: readonly Revision[]): Promise<SaveOutcome> {
   const sent = JSON.stringify(revisions.map(({ question, part, sequence, answer }) => ({ question, part, sequence, answer })));
   const { rows } = await sql<SaveRow>`
     with seat as materialized (
@@ -35,15 +35,16 @@ export async function saveResponses(db: Kysely<DB>, seat: Seat, revisions: reado
   const row = rows[0];
   if (!row) throw new Error('The save statement returned no row.');
   if (row.open) return { ok: true, now: row.now.getTime(), saved: row.saved };
-  return refuseSave(db, seat, revisions, graceSeconds, row);
+  return refuseSave(db, seat, revisions, row);
 }
 
 /** Why a save found no open paper; what came shortly after the end is kept as a claim for the proctor. */
-async function refuseSave(db: Kysely<DB>, seat: Seat, revisions: readonly Revision[], graceSeconds: number, row: SaveRow): Promise<SaveOutcome> {
+async function refuseSave(db: Kysely<DB>, seat: Seat, revisions: readonly Revision[], row: SaveRow): Promise<SaveOutcome> {
   const now = row.now.getTime();
   const found = await db
     .selectFrom('candidate')
     .select(['state', 'epoch', 'device', 'ends_at', 'ended_at'])
+    .select((eb) => eb.selectFrom('school').select(sql<number>`coalesce((settings->>'graceSeconds')::int, 120)`.as('grace')).as('grace'))
     .where('id', '=', seat.candidateId)
     .where('sitting_id', '=', seat.sittingId)
     .executeTakeFirst();
@@ -57,7 +58,7 @@ async function refuseSave(db: Kysely<DB>, seat: Seat, revisions: readonly Revisi
   // Revisions that were stored before the end need no claim.
   const already = new Set(row.saved.map((saved) => `${saved.question} ${saved.part} ${saved.sequence}`));
   const late = revisions.filter((revision) => !already.has(`${revision.question} ${revision.part} ${revision.sequence}`));
-  const claimed = now <= end.getTime() + graceSeconds * 1000 ? await keepClaims(db, seat, late) : [];
+  const claimed = now <= end.getTime() + (found.grace ?? 0) * 1000 ? await keepClaims(db, seat, late) : [];
   return { ok: false, code: 'ended', says: 'The time of this paper is over.', now, claimed: [...row.saved, ...claimed] };
 }
 

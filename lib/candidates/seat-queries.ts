@@ -112,3 +112,16 @@ export async function countAnswered(db: Kysely<DB>, sittingId: string): Promise<
     ) latest group by candidate_id`.execute(db);
   return new Map(rows.map((row) => [row.candidate_id, { parts: row.parts, lastAt: row.last_at }]));
 }
+
+/** Renews the sign of life of a seat, at most once in five seconds; true when it was renewed. */
+export async function markHeard(db: Kysely<DB>, seat: Seat): Promise<boolean> {
+  const renewed = await db
+    .updateTable('candidate')
+    .set({ heard_at: sql`app.now()` })
+    .where('id', '=', seat.candidateId)
+    .where('epoch', '=', seat.epoch)
+    .where('device', '=', seat.device)
+    .where((eb) => eb.or([eb('heard_at', 'is', null), eb('heard_at', '<', sql<Date>`app.now() - interval '5 seconds'`)]))
+    .executeTakeFirst();
+  return renewed.numUpdatedRows > 0n;
+}

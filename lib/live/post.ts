@@ -9,7 +9,10 @@ const gap = 250;
 type Pending = { last: number; timer: NodeJS.Timeout | undefined };
 const shared = globalThis as typeof globalThis & { fullfieldPosts?: Map<string, Pending> };
 
+/** A state changed: the sitting's or a candidate's. Candidates' streams and boards listen. */
 export const sittingTopic = (sittingId: string): string => `sitting:${sittingId}`;
+/** Answers were saved or candidates heard of. Boards alone listen, so that a save does not wake a whole room. */
+export const savesTopic = (sittingId: string): string => `saves:${sittingId}`;
 
 async function notify(topic: string): Promise<void> {
   // A lost message is made good by the streams' own reading anew.
@@ -17,12 +20,12 @@ async function notify(topic: string): Promise<void> {
 }
 
 /**
- * Tells every process that something about the sitting changed, soon and not too often. Call it after the commit;
+ * Tells every process that answers of the sitting were saved, soon and not too often. Call it after the commit;
  * it returns at once. Posts within the gap fall together into one at its end.
  */
-export function postChange(sittingId: string): void {
+export function postSaved(sittingId: string): void {
   const posts = (shared.fullfieldPosts ??= new Map<string, Pending>());
-  const topic = sittingTopic(sittingId);
+  const topic = savesTopic(sittingId);
   const now = performance.now();
   const pending = posts.get(topic) ?? { last: -gap, timer: undefined };
   posts.set(topic, pending);
@@ -38,7 +41,7 @@ export function postChange(sittingId: string): void {
   }, wait);
 }
 
-/** The same inside a transaction, for what a proctor does: it goes out with the commit. */
+/** Tells every process that a state changed; inside the transaction, so that it goes out with the commit. */
 export async function postChangeIn(db: Kysely<DB>, sittingId: string): Promise<void> {
   await sql`select pg_notify(${channel}, ${sittingTopic(sittingId)})`.execute(db);
 }

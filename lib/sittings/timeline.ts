@@ -1,10 +1,7 @@
-import { sql } from 'kysely';
 import type { LockingContext } from '@/lib/context';
 import { accountId } from '@/lib/context';
 import { record } from '@/lib/audit/commands';
-
-/** Channel on which a change of state of a sitting or of one of its candidates is told; the payload is the sitting's id. */
-export const stateChannel = 'sitting_state';
+import { postChangeIn } from '@/lib/live/post';
 
 export type SittingNote = { kind: string; candidateId?: string; data?: Record<string, string | number | boolean | null>; note?: string };
 
@@ -33,6 +30,6 @@ export async function noteSitting(context: LockingContext, sittingId: string, in
     data: { ...input.data, sitting: sittingId, number: counter },
     ...(input.note ? { note: input.note } : {}),
   });
-  await sql`select pg_notify(${stateChannel}, ${sittingId})`.execute(context.db);
+  await postChangeIn(context.db, sittingId);
   return counter;
 }

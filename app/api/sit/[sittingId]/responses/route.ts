@@ -1,8 +1,7 @@
 import { z } from 'zod';
 import { mostRevisionsAtOnce, revision } from '@/lib/candidates/model';
 import { saveResponses } from '@/lib/candidates/save';
-import { postSaved } from '@/lib/live/sittings';
-import { config } from '@/lib/config';
+import { postSaved } from '@/lib/live/post';
 import { answer, noSeat, refusal, roomDb, seatOf, unreadable } from '../seat';
 
 const body = z.object({ revisions: z.array(revision).min(1).max(mostRevisionsAtOnce) });
@@ -14,7 +13,7 @@ export async function POST(request: Request, { params }: { params: Promise<{ sit
   if (!seat) return noSeat();
   const parsed = body.safeParse(await request.json().catch(() => null));
   if (!parsed.success) return unreadable();
-  const outcome = await saveResponses(roomDb(), seat, parsed.data.revisions, config().graceSeconds);
+  const outcome = await saveResponses(roomDb(), seat, parsed.data.revisions);
   if (!outcome.ok) return refusal(outcome);
   postSaved(sittingId);
   return answer(outcome);
