@@ -1,0 +1,4 @@
+declare module 'seedrandom/lib/alea' {
+  /** seedrandom's alea: a generator of numbers in [0, 1), seeded by a text. */
+  export default function alea(seed: string): () => number;
+}
