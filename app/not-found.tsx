@@ -1,0 +1,20 @@
+import type { Metadata } from 'next';
+
+export const metadata: Metadata = { title: 'Nothing here' };
+
+/** Missing and forbidden look alike. */
+export default function NotFound() {
+  return (
+    <main className="page" id="main" tabIndex={-1}>
+      <div className="mx-auto max-w-measure">
+        <h1>Nothing here</h1>
+        <p className="mt-2">There is nothing at this address, or it is not yours to see. Check the address, or sign in with the account that may see it.</p>
+        <div className="btn-row mt-6">
+          <a className="btn btn--main" href="/">
+            Go to the start
+          </a>
+        </div>
+      </div>
+    </main>
+  );
+}

@@ -1,0 +1,12 @@
+import type { ReactNode } from 'react';
+
+/** Where nothing is yet: what is missing, what to do next, and the button for it. */
+export function EmptyState({ title, says, children }: { title: string; says: ReactNode; children?: ReactNode }) {
+  return (
+    <div className="empty">
+      <h3>{title}</h3>
+      <p>{says}</p>
+      {children && <div className="btn-row">{children}</div>}
+    </div>
+  );
+}
