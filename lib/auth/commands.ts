@@ -2,6 +2,7 @@ import { sql } from 'kysely';
 import type { Database } from '@/db/client';
 import { record } from '@/lib/audit/commands';
 import { type Context, inTransaction, type LockingContext } from '@/lib/context';
+import { postChangeIn } from '@/lib/live/post';
 import { done, notFound, refuse, type Result } from '@/lib/result';
 import { beginTry, forgive, triesAt } from './delays';
 import { type ChangePasswordInput, deadLink, type LinkPurpose, type RedeemInput, type SignInInput, type SlipInput, slowed, wrongSignIn, wrongSlip } from './model';
@@ -91,6 +92,12 @@ export async function endSignIn(db: Database, signInId: string): Promise<void> {
   await db.updateTable('sign_in').set({ ended_at: sql`app.now()` }).where('id', '=', signInId).where('ended_at', 'is', null).execute();
 }
 
+/** Lets every open stream of a sitting look anew who it belongs to. */
+async function wakeStreams(context: LockingContext): Promise<void> {
+  const live = await context.db.selectFrom('sitting').where('state', 'in', ['check-in', 'running', 'paused']).select('id').execute();
+  for (const sitting of live) await postChangeIn(context.db, sitting.id);
+}
+
 /** Raises the account's epoch: every sign-in until now ends at once. */
 export async function raiseEpoch(context: LockingContext, accountId: string): Promise<number> {
   const row = await context.db
@@ -100,6 +107,7 @@ export async function raiseEpoch(context: LockingContext, accountId: string): Pr
     .returning('epoch')
     .executeTakeFirstOrThrow();
   await context.db.updateTable('sign_in').set({ ended_at: sql`app.now()` }).where('account_id', '=', accountId).where('ended_at', 'is', null).execute();
+  await wakeStreams(context);
   return row.epoch;
 }
 

@@ -1,17 +1,16 @@
 import { sql } from 'kysely';
 import type { Database } from '@/db/client';
 import type { Actor, Role } from '@/lib/context';
+import { isId } from '@/lib/ids';
 import { signInHours } from './rules';
 import { tokenDigest } from './tokens';
 import type { LinkPurpose } from './model';
 
 export type AccountActor = Extract<Actor, { kind: 'account' }>;
 
-const uuid = /^[0-9a-f]{8}(-[0-9a-f]{4}){3}-[0-9a-f]{12}$/;
-
 /** Who is signed in under this id; null when the sign-in ended, is too old, or the account's epoch moved on. */
 export async function readActor(db: Database, signInId: string): Promise<AccountActor | null> {
-  if (!uuid.test(signInId)) return null;
+  if (!isId(signInId)) return null;
   const row = await db
     .selectFrom('sign_in')
     .innerJoin('account', (join) => join.onRef('account.id', '=', 'sign_in.account_id').onRef('account.epoch', '=', 'sign_in.epoch'))
