@@ -1,5 +1,6 @@
 import { readClock } from '@/db/clock';
 import { accountId, type Context, inTransaction, type LockingContext } from '@/lib/context';
+import { isId } from '@/lib/ids';
 import { done, notFound, refuse, type Result } from '@/lib/result';
 import { noteSitting } from '@/lib/sittings/timeline';
 import { queueMarking } from './commands';
@@ -10,7 +11,7 @@ import { storeClock, toClock } from './store';
 /** The candidate's row of the person who is signed in, sitting locked first. */
 async function lockOwn(context: LockingContext, sittingId: string) {
   const self = accountId(context.actor);
-  if (!self) return undefined;
+  if (!self || !isId(sittingId)) return undefined;
   await context.db.selectFrom('sitting').select('id').where('id', '=', sittingId).forUpdate().execute();
   return context.db.selectFrom('candidate').selectAll().where('sitting_id', '=', sittingId).where('account_id', '=', self).forUpdate().executeTakeFirst();
 }

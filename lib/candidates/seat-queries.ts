@@ -2,6 +2,7 @@ import { type Kysely, sql } from 'kysely';
 import { readClock } from '@/db/clock';
 import type { DB } from '@/db/types';
 import { accountId, type Context } from '@/lib/context';
+import { isId } from '@/lib/ids';
 import { done, notFound, type Result } from '@/lib/result';
 import { readSchool } from '@/lib/school/queries';
 import type { CandidateState, RoomCover, RoomState } from './model';
@@ -60,7 +61,7 @@ export async function readRoomState(db: Kysely<DB>, seat: Seat): Promise<Result<
 /** Cover and state for the person who is signed in, before there is a seat. */
 export async function readOwnPlace(context: Context, sittingId: string): Promise<Result<{ cover: RoomCover; state: RoomState }>> {
   const self = accountId(context.actor);
-  if (!self) return notFound();
+  if (!self || !isId(sittingId)) return notFound();
   const row = await context.db
     .selectFrom('candidate')
     .innerJoin('sitting', 'sitting.id', 'candidate.sitting_id')

@@ -4,6 +4,7 @@ import { lockCandidates, storeClock, toClock } from '@/lib/candidates/store';
 import type { CandidateEvent } from '@/lib/candidates/model';
 import { type Context, inTransaction, type LockingContext } from '@/lib/context';
 import { addJob } from '@/lib/jobs/add';
+import { isId } from '@/lib/ids';
 import { done, notFound, type Result } from '@/lib/result';
 import type { SittingEvent, SittingState } from './model';
 import { mayRunSitting } from './policy';
@@ -12,6 +13,7 @@ import { noteSitting } from './timeline';
 
 /** The sitting's row under lock, if the actor may run it. */
 export async function lockSitting(context: LockingContext, sittingId: string) {
+  if (!isId(sittingId)) return undefined;
   return context.db.selectFrom('sitting').selectAll('sitting').where('sitting.id', '=', sittingId).where(mayRunSitting(context.actor)).forUpdate().executeTakeFirst();
 }
 
