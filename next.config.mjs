@@ -1,7 +1,19 @@
+import { existsSync, writeFileSync } from 'node:fs';
+
+const distDir = process.env.NEXT_DIST_DIR || '.next';
+
+// Next.js writes the types of its build folder into the tsconfig it is given: a build beside the usual one gets a copy of its own.
+const tsconfigPath = distDir === '.next' ? 'tsconfig.json' : `${distDir}.tsconfig.json`;
+if (!existsSync(tsconfigPath)) {
+  const include = ['next-env.d.ts', '**/*.ts', '**/*.tsx', `${distDir}/types/**/*.ts`, `${distDir}/dev/types/**/*.ts`];
+  writeFileSync(tsconfigPath, JSON.stringify({ extends: './tsconfig.json', include, exclude: ['node_modules', '.data'] }));
+}
+
 /** @type {import('next').NextConfig} */
 const config = {
   // Tests and a running installation build side by side, so the folder is a setting.
-  distDir: process.env.NEXT_DIST_DIR || '.next',
+  distDir,
+  typescript: { tsconfigPath },
   poweredByHeader: false,
   productionBrowserSourceMaps: false,
   // Live streams must not be held back by compression; a proxy before us compresses the rest.

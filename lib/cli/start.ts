@@ -1,0 +1,4 @@
+import { main } from './main';
+
+/** `npm start`. */
+await main('production');
