@@ -6,6 +6,7 @@ export type JobPayloads = {
   'send-mail': { mailId: string };
   'send-reset-link': { accountId: string | null };
   'check-template': { checkId: string };
+  'draw-papers': { sittingId: string };
   'mark-paper': { candidateId: string };
   'mark-sitting': { sittingId: string };
 };

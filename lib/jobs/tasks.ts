@@ -3,6 +3,7 @@ import { sendResetLink } from '@/lib/auth/jobs';
 import { checkTemplateJob } from '@/lib/bank/jobs';
 import { config } from '@/lib/config';
 import { sendMail } from '@/lib/mail/send';
+import { drawPapers } from '@/lib/planning/jobs';
 import type { JobName, JobPayloads } from './model';
 
 export type JobTools = {
@@ -19,6 +20,9 @@ type Handler<Name extends JobName> = (payload: JobPayloads[Name], tools: JobTool
  * first what is done already. Throwing means "try again later".
  */
 export const handlers: { readonly [Name in JobName]: Handler<Name> } = {
+  'draw-papers': async (payload, { db, signal }) => {
+    await drawPapers(db, payload, signal);
+  },
   'check-template': (payload, { db, signal }) => checkTemplateJob(db, payload, signal),
   'send-reset-link': (payload, { db }) => sendResetLink(db, payload),
   'send-mail': ({ mailId }, { db }) => sendMail(db, config().smtpUrl, mailId),
