@@ -32,7 +32,8 @@ async function takenBy(context: LockingContext, person: { email: string | null; 
     : refuse('learner-number-taken', `${other.name} has this learner number already.`, 'learnerNumber');
 }
 
-async function insertAccount(context: LockingContext, input: PersonInput): Promise<Result<{ id: string }, Taken>> {
+/** Stores a new account, within a transaction whose caller has checked actor and input. */
+export async function insertAccount(context: LockingContext, input: PersonInput): Promise<Result<{ id: string }, Taken>> {
   const person = normalParticulars(input);
   const taken = await takenBy(context, person, null);
   if (taken) return taken;
@@ -159,7 +160,8 @@ async function withRegistrarsLocked(context: Context, id: string, work: (locked:
   });
 }
 
-async function voidSlips(context: LockingContext, id: string): Promise<void> {
+/** Lets every slip of the account that was not used expire now. */
+export async function voidSlips(context: LockingContext, id: string): Promise<void> {
   await context.db.updateTable('slip').set({ expires_at: sql`app.now()` }).where('account_id', '=', id).where('used_at', 'is', null).execute();
 }
 
