@@ -83,6 +83,11 @@ export type RoomCover = {
   startsAt: number;
   zone: string;
   locale: string;
+  /** The cover page of the paper: instructions as HTML of ours, the declaration, what may lie on the bench, the pass rule. */
+  instructionsHtml: string;
+  declaration: string;
+  materials: string[];
+  passRule: string[];
 };
 
 export type SaveOutcome =

@@ -66,7 +66,12 @@ export async function readOwnPlace(context: Context, sittingId: string): Promise
     .selectFrom('candidate')
     .innerJoin('sitting', 'sitting.id', 'candidate.sitting_id')
     .innerJoin('account', 'account.id', 'candidate.account_id')
+    .leftJoin('paper', 'paper.candidate_id', 'candidate.id')
     .select(stateColumns)
+    .select([
+      sql<string | null>`paper.content->'cover'->>'instructionsHtml'`.as('instructions'), sql<string | null>`paper.content->'cover'->>'declaration'`.as('declaration'),
+      sql<string[] | null>`paper.content->'materials'`.as('materials'), sql<string[] | null>`paper.content->'passRule'`.as('pass_rule'),
+    ])
     .select(['sitting.id as sitting_id', 'sitting.title', 'sitting.room', 'sitting.minutes', 'sitting.starts_at', 'sitting.locale', 'account.name'])
     .where('sitting.id', '=', sittingId)
     .where('candidate.account_id', '=', self)
@@ -76,6 +81,7 @@ export async function readOwnPlace(context: Context, sittingId: string): Promise
   const cover = {
     sittingId: row.sitting_id, title: row.title, room: row.room, candidateName: row.name, minutes: row.minutes,
     startsAt: row.starts_at.getTime(), zone: school.settings.zone, locale: row.locale,
+    instructionsHtml: row.instructions ?? '', declaration: row.declaration ?? '', materials: row.materials ?? [], passRule: row.pass_rule ?? [],
   };
   return done({ cover, state: toRoomState(row, now, false) });
 }
