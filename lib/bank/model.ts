@@ -37,6 +37,8 @@ export const newTemplateInput = z.object({
   title: z.string().trim().min(1, 'Give the template a title.').max(120, 'Use at most 120 characters.').regex(/^[^\r\n]*$/, 'Keep it on one line.'),
   slug: slugText,
   area: z.string().min(1, 'Choose an area.'),
+  /** A caution of the library to begin with; empty for none. */
+  caution: z.string().max(80).default(''),
   level: z.coerce.number<string | number>().int('Choose a level.').min(1, 'Choose a level.').max(9, 'Choose a level.'),
 });
 export type NewTemplateForm = z.input<typeof newTemplateInput>;
