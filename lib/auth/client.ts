@@ -14,3 +14,6 @@ async function attempt(provider: 'password' | 'slip', input: Record<string, stri
 
 export const signInByPassword = (input: SignInInput): Promise<string | null> => attempt('password', input);
 export const signInBySlip = (input: SlipInput): Promise<string | null> => attempt('slip', input);
+
+/** Goes to another page by a full navigation, so that nothing of an earlier person stays in the browser's memory. */
+export const leaveFor = (address: string): void => window.location.assign(address);

@@ -100,3 +100,17 @@ export async function listOwnClasses(context: Context): Promise<Result<ClassRow[
     query = query.where((where) => where.exists(where.selectFrom('class_instructor').whereRef('class_instructor.class_id', '=', 'class.id').where('account_id', '=', actor.id).select('account_id')));
   return done((await query.orderBy('class.name').execute()).map(toRow));
 }
+
+/** Name of the open term that a day falls into, for the way in; null between terms. Everybody may know it. */
+export async function readTermOn(db: Context['db'], day: string): Promise<string | null> {
+  const row = await db
+    .selectFrom('term')
+    .where('state', '=', 'open')
+    .where('starts_on', '<=', day)
+    .where('ends_on', '>=', day)
+    .select('name')
+    .orderBy('starts_on', 'desc')
+    .limit(1)
+    .executeTakeFirst();
+  return row?.name ?? null;
+}
