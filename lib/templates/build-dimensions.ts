@@ -1,27 +1,51 @@
 import type { Expression } from '@/lib/expressions/compile';
+import { checkDimension, dimensionOf, type Quantity, type Units } from '@/lib/expressions/dimension';
 import type { Unit } from '@/lib/numeric/units';
 import type { Complaints } from './complaints';
 import type { GivenPlan } from './plan';
 import type { Path } from './yaml';
 
+/** Of a name that could not be understood nothing is known, so that one fault is one complaint. */
+const unknown: Quantity = { dimension: null, factor: null };
+
 /** What each name and part of a template measures, and whether a formula's dimension is that of its unit. */
 export class Dimensions {
-  private readonly units = new Map<string, Unit>();
-  private readonly parts = new Map<string, Unit>();
+  private readonly names = new Map<string, Quantity>();
+  private readonly parts = new Map<string, Quantity>();
+  private readonly units: Units = {
+    name: (name) => this.names.get(name) ?? unknown,
+    part: (part) => this.parts.get(part) ?? unknown,
+  };
+
   constructor(givens: readonly GivenPlan[], private readonly complaints: Complaints) {
-    for (const { name, unit } of givens) this.units.set(name, unit);
+    for (const { name, unit } of givens) this.names.set(name, unit);
   }
 
   know(name: string, unit: Unit): void {
-    this.units.set(name, unit);
+    this.names.set(name, unit);
   }
   knowPart(part: string, unit: Unit): void {
     this.parts.set(part, unit);
   }
-  infer(_name: string, _expression: Expression, _path: Path): void {
-    return undefined;
+
+  /** Finds what a derived value measures that states no unit. */
+  infer(name: string, expression: Expression, path: Path): void {
+    const found = dimensionOf(expression, this.units);
+    if (found.ok) this.names.set(name, found.value);
+    else this.complaints.add('dimension', found.problem.says, path);
   }
-  check(_expression: Expression, _target: Unit, _path: Path, _tradeConstant: boolean): void {
-    return undefined;
+
+  /**
+   * Complains where a formula does not come out in its unit. A trade constant (5252, 0.0175) carries units of its own, so
+   * beside one only what cannot be added or compared is a fault.
+   */
+  check(expression: Expression, target: Unit, path: Path, tradeConstant: boolean): void {
+    if (!tradeConstant) {
+      const problem = checkDimension(expression, this.units, target);
+      if (problem !== null) this.complaints.add('dimension', problem.says, path);
+      return;
+    }
+    const found = dimensionOf(expression, this.units);
+    if (!found.ok && found.problem.problem === 'dimension') this.complaints.add('dimension', found.problem.says, path);
   }
 }
