@@ -1,8 +1,9 @@
 import { execFile, spawn } from 'node:child_process';
 import { createHash, randomBytes } from 'node:crypto';
-import { promises as fs, existsSync, readdirSync, statSync } from 'node:fs';
+import { promises as fs, existsSync, readdirSync, readFileSync, statSync } from 'node:fs';
 import net from 'node:net';
 import path from 'node:path';
+import { setTimeout as sleep } from 'node:timers/promises';
 import pg from 'pg';
 
 const owner = 'fullfield';
@@ -136,10 +137,40 @@ async function clusterPassword(dataDir: string): Promise<string> {
   return password;
 }
 
+// A killed server stays a zombie until somebody reaps it, which looks alive to PostgreSQL's own check.
+const isZombie = (pid: number): boolean => {
+  try {
+    const stat = readFileSync(`/proc/${pid}/stat`, 'utf8');
+    return stat.slice(stat.lastIndexOf(')') + 2).startsWith('Z');
+  } catch {
+    return false;
+  }
+};
+
+/** Whether any process still stands in `files`: PostgreSQL's processes all do. */
+async function inUse(files: string): Promise<boolean> {
+  const pids = (await fs.readdir('/proc')).filter((name) => /^\d+$/.test(name));
+  const places = await Promise.all(pids.map((pid) => fs.readlink(`/proc/${pid}/cwd`).catch(() => '')));
+  return places.includes(files);
+}
+
+/** Takes away the note of a killed server that nobody has reaped, once its last process is gone; without it a start would be refused. */
+async function clearDeadNote(files: string): Promise<void> {
+  const file = path.join(files, 'postmaster.pid');
+  const pid = Number((await fs.readFile(file, 'utf8').catch(() => '')).split('\n')[0]);
+  if (!pid || !isZombie(pid)) return;
+  for (let tries = 0; await inUse(files); tries += 1) {
+    if (tries === 100) throw new Error(`Processes of a killed PostgreSQL still use ${files}. Stop them and start again.`);
+    await sleep(100);
+  }
+  await fs.rm(file, { force: true });
+}
+
 /** Port of the server that runs on `folder`, from its own note (line 4 of postmaster.pid); undefined when none runs. */
 async function runningPort(bin: string, folder: string): Promise<number | undefined> {
   if (!existsSync(folder)) return undefined;
   const files = path.join(folder, 'files');
+  await clearDeadNote(files);
   if ((await runQuietly(path.join(bin, 'pg_ctl'), ['status', '-D', files], folder)) !== 0) return undefined;
   const note = await fs.readFile(path.join(files, 'postmaster.pid'), 'utf8').catch(() => '');
   const port = Number(note.split('\n')[3]);

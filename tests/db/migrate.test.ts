@@ -31,10 +31,10 @@ describe('migrations', () => {
 });
 
 describe('values', () => {
-  it('arrive as numbers, exact text and days', async () => {
-    const { rows } = await sql<{ big: number; exact: string; day: string }>`
-      select 9007199254740991::int8 as big, 0.10::numeric as exact, '2026-03-02'::date as day`.execute(database.app);
-    expect(rows[0]).toEqual({ big: 9007199254740991, exact: '0.10', day: '2026-03-02' });
+  it('arrive as numbers and days, and a number that would not be exact is refused', async () => {
+    const { rows } = await sql<{ big: number; mark: number; day: string }>`
+      select 9007199254740991::int8 as big, 2.50::numeric as mark, '2026-03-02'::date as day`.execute(database.app);
+    expect(rows[0]).toEqual({ big: 9007199254740991, mark: 2.5, day: '2026-03-02' });
     await expect(sql`select 9007199254740993::int8`.execute(database.app)).rejects.toThrow(RangeError);
   });
 });

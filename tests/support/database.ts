@@ -22,7 +22,7 @@ function addressOf(templateUrl: string, database: string): string {
 
 /**
  * A database of its own for a test file: a clone of the migrated template. `DATABASE_URL` of the file's process points to it
- * until `close()`, so that `appDb()` and `candidateDb()` open it too. Call it in `beforeAll`, `close()` in `afterAll`.
+ * until `close()`, so that `appDb()` and `candidateDb()` open it too; the other settings of lib/config are a test's. Call it in `beforeAll`, `close()` in `afterAll`.
  */
 export async function openTestDatabase(): Promise<TestDatabase> {
   const templateUrl = inject('templateUrl');
@@ -31,7 +31,8 @@ export async function openTestDatabase(): Promise<TestDatabase> {
   const admin = openDatabase(addressOf(templateUrl, 'postgres'), undefined, { max: 1 });
   await sql`create database ${sql.id(name)} template ${sql.id(template)}`.execute(admin);
   const url = addressOf(templateUrl, name);
-  process.env.DATABASE_URL = url;
+  Object.assign(process.env, { PUBLIC_URL: 'https://exams.example.org', FULLFIELD_KIND: 'test', DATABASE_URL: url });
+  for (const key of ['NEXTAUTH_SECRET', 'SEAT_KEY']) process.env[key] ??= randomBytes(32).toString('base64url');
   const owner = openDatabase(url, undefined, { max: 3 });
   const app = openDatabase(url, 'fullfield_app');
   const candidate = openDatabase(url, 'fullfield_candidate');
