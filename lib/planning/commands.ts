@@ -1,6 +1,8 @@
 import { randomBytes } from 'node:crypto';
 import { readClock } from '@/db/clock';
 import { record } from '@/lib/audit/commands';
+import { nextCandidate } from '@/lib/candidates/rules';
+import { lockCandidates, storeClock, toClock } from '@/lib/candidates/store';
 import { accountId, type Context, holds, inTransaction } from '@/lib/context';
 import { done, notFound, refuse, type Result } from '@/lib/result';
 import type { School } from '@/lib/school/model';
@@ -14,7 +16,7 @@ import { openProctors } from './queries';
 import { teachesClass } from './relation';
 import { allowancesOn, enrolledOn } from './roster';
 import { defaultSeat } from './rules';
-import { type Planner, queuePapers, timeColumns, withPlanned } from './store';
+import { type Planner, queuePapers, timeColumns, withPlanned, withTaught } from './store';
 
 type Times = { opensAt: Date; startsAt: Date; latestStartAt: Date };
 
@@ -137,15 +139,20 @@ export async function renewNeeds(context: Context, sittingId: string): Promise<R
   });
 }
 
-/** Calls a planned sitting off; nothing of it is deleted. */
+/** Calls a sitting off before it starts; nothing of it is deleted. Whoever was admitted is withdrawn. */
 export async function cancelSitting(context: Context, sittingId: string, reason: string): Promise<Result<null>> {
   const note = reason.trim().slice(0, 500);
   if (note === '') return refuse('reason', 'Say why the sitting is cancelled: it stands in the record.', 'reason');
-  return withPlanned(context, sittingId, async (planner, sitting) => {
+  return withTaught(context, sittingId, async (planner, sitting) => {
+    const now = await readClock(planner.db);
     const facts = { state: sitting.state as SittingState, papersDrawn: sitting.papers === 'drawn', opensAt: sitting.opens_at, startsAt: sitting.starts_at };
-    const next = nextSitting(facts, 'cancel', await readClock(planner.db));
+    const next = nextSitting(facts, 'cancel', now);
     if (!next.ok) return next;
     await planner.db.updateTable('sitting').set({ state: next.value }).where('id', '=', sitting.id).execute();
+    for (const row of await lockCandidates(planner, sitting.id)) {
+      const clock = nextCandidate(toClock(row), { kind: 'withdraw' }, now);
+      if (clock.ok) await storeClock(planner, row.id, clock.value, { epoch: row.epoch + 1 });
+    }
     await noteSitting(planner, sitting.id, { kind: 'cancel', note });
     return done(null);
   });

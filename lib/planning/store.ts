@@ -13,21 +13,23 @@ const lockSitting = (context: LockingContext, sittingId: string) =>
   context.db.selectFrom('sitting').selectAll('sitting').where('sitting.id', '=', sittingId).where(teachesClass(context.actor, 'sitting.class_id')).forUpdate().executeTakeFirst();
 export type PlannedSitting = NonNullable<Awaited<ReturnType<typeof lockSitting>>>;
 
-/** Authorises, locks the sitting and runs `work` while it is still planned; missing and forbidden look alike. */
-export async function withPlanned<Value>(
-  context: Context,
-  sittingId: string,
-  work: (planner: Planner, sitting: PlannedSitting) => Promise<Result<Value>>,
-): Promise<Result<Value>> {
+type Work<Value> = (planner: Planner, sitting: PlannedSitting) => Promise<Result<Value>>;
+
+/** Authorises, locks the sitting and runs `work`, whatever its state; missing and forbidden look alike. */
+export async function withTaught<Value>(context: Context, sittingId: string, work: Work<Value>): Promise<Result<Value>> {
   const me = accountId(context.actor);
   if (!me || !z.guid().safeParse(sittingId).success) return notFound();
   return inTransaction(context, async (locked) => {
     const sitting = await lockSitting(locked, sittingId);
-    if (!sitting) return notFound();
-    if (sitting.state !== 'planned') return refuse('state', `The plan can be changed only while the sitting is planned; this one is ${sitting.state}.`);
-    return work({ ...locked, me }, sitting);
+    return sitting ? work({ ...locked, me }, sitting) : notFound();
   });
 }
+
+/** As `withTaught`, while the sitting is still planned. */
+export const withPlanned = <Value>(context: Context, sittingId: string, work: Work<Value>): Promise<Result<Value>> =>
+  withTaught(context, sittingId, async (planner, sitting) =>
+    sitting.state === 'planned' ? work(planner, sitting) : refuse('state', `The plan can be changed only while the sitting is planned; this one is ${sitting.state}.`),
+  );
 
 /** What an accommodation means for a candidate of a sitting, as columns. */
 export const timeColumns = (minutes: number, allowance: Allowance = noAllowance) => ({
