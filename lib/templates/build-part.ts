@@ -2,7 +2,7 @@ import type { Expression } from '@/lib/expressions/compile';
 import { readNumber } from '@/lib/numeric/reader';
 import type { Unit } from '@/lib/numeric/units';
 import type { Formulas } from './build-formulas';
-import { checkPlaceholders } from './build-texts';
+import { checkText } from './build-texts';
 import type { Complaints } from './complaints';
 import type { Build, PartPlan } from './kinds/kind';
 import type { ProblemCode } from './problem';
@@ -38,8 +38,7 @@ export class PartBuild implements Build {
     return null;
   }
   text(text: string, path: Path, limit: number): void {
-    if (text.length > limit) this.complain('length', `The text has ${text.length} characters, and ${limit} fit the paper: shorten it.`, path);
-    checkPlaceholders(text, this.at(path), this.formulas.text, this.complaints, false);
+    checkText(text, limit, 'text', this.at(path), this.formulas.text, this.complaints);
   }
   earlier(part: string): boolean {
     return this.formulas.text.parts.slice(0, this.index).some((one) => one.part === part);

@@ -1,11 +1,13 @@
+import { blocksOf, formulasIn } from './blocks';
 import type { Complaints } from './complaints';
+import { formulaTrouble } from './html';
 import { longest } from './model';
 import type { TemplateText } from './parse';
 import { placeholdersIn } from './placeholders';
 import type { Path } from './yaml';
 
 /** A placeholder must name what is printed: a given, a declared derived value, and in the solution a part. */
-export function checkPlaceholders(text: string, path: Path, template: TemplateText, complaints: Complaints, partsToo: boolean): void {
+function checkPlaceholders(text: string, path: Path, template: TemplateText, complaints: Complaints, partsToo: boolean): void {
   for (const name of placeholdersIn(text)) {
     const complain = (says: string) => complaints.add('placeholder', says, path);
     if (name.startsWith('part.')) {
@@ -22,21 +24,31 @@ export function checkPlaceholders(text: string, path: Path, template: TemplateTe
   }
 }
 
+/** Complains of formulas that cannot be set; a value stands for each placeholder. */
+function checkFormulas(text: string, path: Path, complaints: Complaints): void {
+  for (const { tex } of formulasIn(blocksOf(text, () => ({ text: '1', tex: '1' })))) {
+    const trouble = formulaTrouble(tex);
+    if (trouble !== null) complaints.add('schema', `The formula ${tex.slice(0, 60)} cannot be set: ${trouble}.`, path);
+  }
+}
+
 const checkLength = (text: string, limit: number, what: string, path: Path, complaints: Complaints): void => {
   if (text.length > limit) complaints.add('length', `The ${what} has ${text.length} characters, and ${limit} fit the paper: shorten it.`, path);
 };
 
-/** Checks length and placeholders of title, stem, questions, labels and solution. */
+/** One printed text: it fits, its placeholders name something, its formulas can be set. */
+export function checkText(text: string, limit: number, what: string, path: Path, template: TemplateText, complaints: Complaints): void {
+  checkLength(text, limit, what, path, complaints);
+  checkPlaceholders(text, path, template, complaints, what === 'solution');
+  checkFormulas(text, path, complaints);
+}
+
+/** Checks title, stem, questions, labels and solution. */
 export function checkTexts(template: TemplateText, complaints: Complaints): void {
   checkLength(template.title, longest.title, 'title', ['title'], complaints);
-  checkLength(template.stem, longest.stem, 'stem', ['stem'], complaints);
-  checkLength(template.solution, longest.solution, 'solution', ['solution'], complaints);
-  checkPlaceholders(template.stem, ['stem'], template, complaints, false);
-  checkPlaceholders(template.solution, ['solution'], template, complaints, true);
-  template.parts.forEach((part, index) => {
-    checkLength(part.ask, longest.ask, 'question', ['parts', index, 'ask'], complaints);
-    checkPlaceholders(part.ask, ['parts', index, 'ask'], template, complaints, false);
-  });
+  checkText(template.stem, longest.stem, 'stem', ['stem'], template, complaints);
+  checkText(template.solution, longest.solution, 'solution', ['solution'], template, complaints);
+  template.parts.forEach((part, index) => checkText(part.ask, longest.ask, 'question', ['parts', index, 'ask'], template, complaints));
   for (const [name, derived] of Object.entries(template.derive))
     if (typeof derived !== 'string' && derived.label !== undefined) checkLength(derived.label, longest.label, 'label', ['derive', name, 'label'], complaints);
 }

@@ -57,12 +57,3 @@ const itemHtml = (item: readonly Block[]): string => {
 
 /** Text of one line, without a paragraph round it. */
 export const inlineHtml = itemHtml;
-
-const symbol = /^([A-Za-z\u0370-\u03ff]+)(?:_([A-Za-z0-9]+))?('?)$/;
-
-/** A quantity's symbol such as R_a in HTML: italic, its index below. */
-export function symbolHtml(text: string): string {
-  const [, letter = '', index, prime = ''] = symbol.exec(text) ?? [];
-  if (letter === '') return '';
-  return `<i>${escapeHtml(letter)}</i>${index === undefined ? '' : `<sub>${escapeHtml(index)}</sub>`}${prime === '' ? '' : '′'}`;
-}

@@ -7,6 +7,7 @@ import { marksOf, type Template } from './plan';
 import { plateOf } from './plate';
 import { textBlocks } from './text-blocks';
 
+/** `symbol` as written, R_a: what follows the underscore is printed lowered. */
 export interface PlateCell { label: string; symbol?: string; value: string; unit: string }
 export interface QuestionPart extends SeenPart { part: string; kind: string; askHtml: string; marks: number; working: boolean }
 
