@@ -1,5 +1,5 @@
 import { toPlain } from './arithmetic';
-import type { Complex, Run, Scope, Value } from './arithmetic';
+import type { Run, Scope, Value } from './arithmetic';
 import { runOf } from './run';
 import { parseExpression } from './parse';
 import type { ExpressionResult, Names } from './parse';

@@ -140,6 +140,7 @@ export function checkDimension(expression: Expression, units: Units, target: Qua
     return { problem: 'dimension', says: `${expression.source} comes out in ${inWords(found.value)}, and ${inWords(target)} are asked.` };
   }
   if (factor === null || target.factor === null || sameFactor(factor, target.factor)) return null;
-  const ratio = Number((factor / target.factor).toPrecision(6));
-  return { problem: 'factor', says: `The units of ${expression.source} do not cancel: its value is ${ratio} times too small for the unit asked. Convert, or state a trade-constant.` };
+  const ratio = factor / target.factor;
+  const times = ratio > 1 ? `${Number(ratio.toPrecision(6))} times too small` : `${Number((1 / ratio).toPrecision(6))} times too large`;
+  return { problem: 'factor', says: `The units of ${expression.source} do not cancel: its value is ${times} for the unit asked. Convert, or state a trade-constant.` };
 }

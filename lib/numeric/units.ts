@@ -70,7 +70,8 @@ function tidy(text: string): string {
     .replaceAll(/[⋅·•*×\s]/g, ' ')
     .split(' ')
     .filter(Boolean)
-    .join(' ');
+    .join(' ')
+    .replaceAll(' per ', '/');
 }
 
 /** A unit that is no product or quotient, with or without prefix. `fold`: also in the wrong case, where that leaves m and M apart. */
@@ -178,7 +179,7 @@ const FOLDED_TOGETHER = new Map([...RUN_TOGETHER].map(([name, units]) => [name.t
 
 function parse(text: string, fold: boolean): Unit | null {
   if (text.length > LONGEST) return null;
-  const whole = tidy(text).replaceAll(' per ', '/');
+  const whole = tidy(text);
   const together = fold ? FOLDED_TOGETHER.get(whole.toLowerCase()) : RUN_TOGETHER.get(whole);
   const unit = together === undefined ? simple(whole, fold) : null;
   if (unit) return unit;
