@@ -39,11 +39,26 @@ export function FormParts() {
         <TextInput label="Time allowed" name="minutes" defaultValue="125.5" unit="minutes" inputMode="numeric" error={errors[0]?.says} />
         <TextInput label="Room" name="room" placeholder="Room or building" optional />
         <TextInput label="Set by the exam" name="fixed" defaultValue="120 min" disabled help="Changed on the exam, not here." />
-        <Select label="Zone" name="zone" options={[{ value: 'a', label: 'Mountain Time' }, { value: 'b', label: 'Pacific Time' }]} />
+        <Select
+          label="Zone"
+          name="zone"
+          options={[
+            { value: 'a', label: 'Mountain Time' },
+            { value: 'b', label: 'Pacific Time' },
+          ]}
+        />
         <DateTimeInput label="Starts" name="starts" defaultValue="2025-11-20T09:25" zone="Mountain Time" />
         <TextArea label="Materials allowed" name="materials" defaultValue="Calculator and formula sheet" />
         <Checkbox label="Late-comers get full time" name="late" defaultChecked help="Each with a reason." />
-        <RadioGroup label="Unit missing" name="unit" options={[{ value: 'read', label: 'Read in the asked unit' }, { value: 'lose', label: 'Lose the unit mark' }]} defaultChecked={false} />
+        <RadioGroup
+          label="Unit missing"
+          name="unit"
+          options={[
+            { value: 'read', label: 'Read in the asked unit' },
+            { value: 'lose', label: 'Lose the unit mark' },
+          ]}
+          defaultChecked={false}
+        />
         <div className="btn-row">
           <Button look="main" type="submit">
             Save the exam
@@ -62,7 +77,10 @@ export function DialogParts() {
     ask({
       title: 'Pause all 21 candidates?',
       says: 'Every screen goes blank and every clock stops. Time is restored exactly when you go on.',
-      facts: [{ label: 'Room', value: '114, classes E2-A and E2-B' }, { label: 'Out of contact', value: '1, blanks on return' }],
+      facts: [
+        { label: 'Room', value: '114, classes E2-A and E2-B' },
+        { label: 'Out of contact', value: '1, blanks on return' },
+      ],
       keep: 'Keep running',
       verb: 'Pause all',
     });

@@ -28,7 +28,13 @@ const rows: LedgerRow[] = people.map(([candidate, motors, total, outcome], at) =
   id: `c${at}`,
   href: `/parts?candidate=c${at}`,
   gone: outcome === 'absent',
-  cells: { candidate, number: `KR-204${10 + at}`, motors, total, outcome: { value: outcome, show: <StateMark thing="outcome" state={outcome} /> } },
+  cells: {
+    candidate,
+    number: `KR-204${10 + at}`,
+    motors,
+    total,
+    outcome: { value: outcome, show: <StateMark thing="outcome" state={outcome} /> },
+  },
 }));
 
 const bulk: BulkAction[] = [
@@ -48,7 +54,10 @@ const options: LedgerOptions = {
   sort: { key: 'candidate' },
 };
 
-const many: LedgerRow[] = Array.from({ length: 450 }, (_, at) => ({ id: `n${at}`, cells: { seed: `check-${at}`, key: Math.round(60000 + ((at * 7919) % 40000)) / 1000 } }));
+const many: LedgerRow[] = Array.from({ length: 450 }, (_, at) => ({
+  id: `n${at}`,
+  cells: { seed: `check-${at}`, key: Math.round(60000 + ((at * 7919) % 40000)) / 1000 },
+}));
 const manyColumns: LedgerColumn[] = [
   { key: 'seed', title: 'Seed' },
   { key: 'key', title: 'Key, A', figures: true, rule: true },

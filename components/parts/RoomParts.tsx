@@ -23,15 +23,21 @@ function Clocks() {
     <div className="grid gap-6 md:grid-cols-3">
       <div className="border border-rule">
         <TimeBar seconds={4360} allowed={7200} />
-        <Clock seconds={4360} says="left · ends 11:25" hidden={hidden} onHide={setHidden} />
+        <div className="p-3">
+          <Clock seconds={4360} says="left · ends 11:25" hidden={hidden} onHide={setHidden} />
+        </div>
       </div>
       <div className="border border-rule">
         <TimeBar seconds={288} allowed={7200} />
-        <Clock seconds={288} says="left · ends 11:25" />
+        <div className="p-3">
+          <Clock seconds={288} says="left · ends 11:25" />
+        </div>
       </div>
       <div className="border border-rule">
         <TimeBar seconds={4360} allowed={7200} stopped />
-        <Clock seconds={4360} says="stopped by the proctor" stopped />
+        <div className="p-3">
+          <Clock seconds={4360} says="stopped by the proctor" stopped />
+        </div>
       </div>
     </div>
   );
@@ -43,9 +49,36 @@ function Answers() {
     <>
       <div className="grid gap-6 md:grid-cols-3">
         <AnswerBox aria-label="Blank" reads="number and unit" state="blank" />
-        <AnswerBox aria-label="Sending" defaultValue="0.2416 kV" reads={<>reads as <b>241.6 volts</b></>} state="sending" />
-        <AnswerBox aria-label="Saved" defaultValue="221,4 V" reads={<>reads as <b>221.4 volts</b></>} state="saved" />
-        <AnswerBox aria-label="No contact" defaultValue="1k5" reads={<>reads as <b>1,500 ohms</b></>} state="kept here" />
+        <AnswerBox
+          aria-label="Sending"
+          defaultValue="0.2416 kV"
+          reads={
+            <>
+              reads as <b>241.6 volts</b>
+            </>
+          }
+          state="sending"
+        />
+        <AnswerBox
+          aria-label="Saved"
+          defaultValue="221,4 V"
+          reads={
+            <>
+              reads as <b>221.4 volts</b>
+            </>
+          }
+          state="saved"
+        />
+        <AnswerBox
+          aria-label="No contact"
+          defaultValue="1k5"
+          reads={
+            <>
+              reads as <b>1,500 ohms</b>
+            </>
+          }
+          state="kept here"
+        />
         <AnswerBox aria-label="Unread" defaultValue="22..4 V" reads="write one number and a unit" state="cannot be read" />
         <AnswerBox aria-label="Paused" defaultValue="60 A" reads="kept, the sitting is paused" state="paused" disabled />
       </div>
@@ -88,7 +121,14 @@ export function SeatParts() {
         <Seat person={{ seat: 'A1', name: 'A. Abara' }} state="writing" progress={progress} left="1:12:40" />
         <Seat person={{ seat: 'A5', name: 'E. Quill', need: '+25 %' }} state="writing" progress={progress} left="1:42:40" />
         <Seat person={{ seat: 'C2', name: 'H. Amari', need: 'rest' }} state="on rest break" progress={progress} left="stopped" />
-        <Seat person={{ seat: 'B4', name: 'D. Varga' }} state="writing" signal="lost contact" progress={progress} left="1:12:40" select={{ selected, onSelect: () => setSelected(!selected) }} />
+        <Seat
+          person={{ seat: 'B4', name: 'D. Varga' }}
+          state="writing"
+          signal="lost contact"
+          progress={progress}
+          left="1:12:40"
+          select={{ selected, onSelect: () => setSelected(!selected) }}
+        />
         <Seat person={{ seat: 'A4', name: 'J. Petrov' }} state="writing" signal="help called" progress={progress} left="1:12:40" />
         <Seat person={{ seat: 'C5', name: 'G. Dufresne' }} state="handed in" progress={{ answered: 12, of: 12 }} left="10:11" />
         <Seat person={{ seat: 'D6', name: 'U. Kowal' }} state="expected" progress={{ answered: 0, of: 12 }} left="" />

@@ -125,15 +125,29 @@ export function PlateParts() {
 export function NoteParts() {
   return (
     <Section title="Notice, caution" says="where the matter is; no toasts">
-      <Notice kind="ok" title="Released." action={<Button look="quiet" size="dense">Open</Button>}>
+      <Notice
+        kind="ok"
+        title="Released."
+        action={
+          <Button look="quiet" size="dense">
+            Open
+          </Button>
+        }
+      >
         23 students can read their marked papers.
       </Notice>
-      <Notice kind="info" title="Erratum to question 7.">Read “field circuit”, not “field coil”.</Notice>
-      <Notice kind="wait" title="One row left out.">Line 14: the learner number is already taken.</Notice>
-      <Notice kind="stop" title="The draw gave a negative armature current in 14 of 2,000 draws.">Narrow V or raise Rf.</Notice>
+      <Notice kind="info" title="Erratum to question 7.">
+        Read “field circuit”, not “field coil”.
+      </Notice>
+      <Notice kind="wait" title="One row left out.">
+        Line 14: the learner number is already taken.
+      </Notice>
+      <Notice kind="stop" title="The draw gave a negative armature current in 14 of 2,000 draws.">
+        Narrow V or raise Rf.
+      </Notice>
       <Caution title="Never open the field of a running motor to try this.">
-        A turning machine is a generator and its terminals are live. For supervised training only; local codes, the maker’s instructions and a
-        licensed electrician decide.
+        A turning machine is a generator and its terminals are live. For supervised training only; local codes, the maker’s instructions and
+        a licensed electrician decide.
       </Caution>
       <EmptyState title="No sittings this term" says="Approve an exam first, then schedule it for a class.">
         <LinkButton href="/parts">Go to Exams</LinkButton>
@@ -156,10 +170,31 @@ export function FactParts({ formula }: { formula: string }) {
         end={{ figure: '1:12:40', says: 'left in the room' }}
       />
       <div className="grid gap-6 md:grid-cols-2">
-        <Pairs pairs={[{ label: 'Learner number', value: <span className="num">KR-20417</span> }, { label: 'Saved', value: '6 of 12, last at 10:10:12' }]} />
-        <Timeline entries={[{ key: '1', at: '10:10', machine: '2025-11-20T10:10', says: 'Last heard from tablet 9' }, { key: '2', at: '09:25', machine: '2025-11-20T09:25', says: 'Started with the room' }]} />
+        <Pairs
+          pairs={[
+            { label: 'Learner number', value: <span className="num">KR-20417</span> },
+            { label: 'Saved', value: '6 of 12, last at 10:10:12' },
+          ]}
+        />
+        <Timeline
+          entries={[
+            { key: '1', at: '10:10', machine: '2025-11-20T10:10', says: 'Last heard from tablet 9' },
+            { key: '2', at: '09:25', machine: '2025-11-20T09:25', says: 'Started with the room' },
+          ]}
+        />
       </div>
-      <Progress label="Check" done={1240} of={2000} unit="draws" says={<StateMark thing="check" state="running" />} cancel={<Button look="quiet" size="dense">Cancel the check</Button>} />
+      <Progress
+        label="Check"
+        done={1240}
+        of={2000}
+        unit="draws"
+        says={<StateMark thing="check" state="running" />}
+        cancel={
+          <Button look="quiet" size="dense">
+            Cancel the check
+          </Button>
+        }
+      />
       <Histogram title="Key of part a over 2,000 draws" unit="A" counted="Draws" bins={bins} marks={[{ at: 92, label: 'this draw' }]} />
       <ShareBars
         label="Marks by area"
@@ -168,7 +203,12 @@ export function FactParts({ formula }: { formula: string }) {
           { label: 'DC generators', share: 0.43, says: '13.0 of 30', low: true },
         ]}
       />
-      <Keys keys={[{ press: ['↑', '↓'], does: 'move among rows' }, { press: ['/'], does: 'go to the filter' }]} />
+      <Keys
+        keys={[
+          { press: ['↑', '↓'], does: 'move among rows' },
+          { press: ['/'], does: 'go to the filter' },
+        ]}
+      />
       <LedgerSkeleton rows={3} />
     </Section>
   );

@@ -8,7 +8,14 @@ export type Account = { name: string; role?: string };
 /** Who is signed in; view settings; links (`children`) and the sign-out form. */
 export function AccountMenu({ account, view, signOut, children }: { account: Account; view?: ViewSettings; signOut: ReactNode; children?: ReactNode }) {
   return (
-    <Menu label={account.role ? `${account.name}, ${account.role}` : account.name}>
+    <Menu
+      label={
+        <span>
+          {account.name}
+          {account.role && <span className="menu__role">, {account.role}</span>}
+        </span>
+      }
+    >
       {children && <div>{children}</div>}
       <ViewSwitch initial={view} />
       <div>{signOut}</div>

@@ -17,10 +17,9 @@ export function ErrorSummary({ errors, attempt = 0, title = 'Put this right firs
   }, [some, attempt]);
   if (!some) return null;
   const go = (field: string) => {
-    const form = box.current?.closest('form') ?? document;
-    const control = document.getElementById(field) ?? form.querySelector<HTMLElement>(`[name="${CSS.escape(field)}"]`);
-    control?.focus();
-    control?.scrollIntoView({ block: 'center' });
+    const controls = [...(box.current?.closest('form')?.elements ?? [])];
+    const control = document.getElementById(field) ?? controls.find((one) => one.getAttribute('name') === field);
+    if (control instanceof HTMLElement) control.focus();
   };
   return (
     <div className="errors" role="group" aria-labelledby={heading} tabIndex={-1} ref={box}>

@@ -1,4 +1,5 @@
 import type { ReactNode } from 'react';
+import { Sign } from './Sign';
 import { StateMark } from './StateMark';
 import type { StateOf } from './states';
 
@@ -36,6 +37,16 @@ function Ticks({ answered, of }: { answered: number; of: number }) {
 /** A plate for one candidate on the proctor's board; what wants a look stands out by border, wash, shape and word. */
 export function Seat({ person, state, signal, progress, left, select }: SeatProps) {
   const gone = state === 'expected' || state === 'absent' || state === 'refused';
+  const mark = signal ? (
+    <StateMark thing="signal" state={signal} small />
+  ) : state === 'writing' ? (
+    // The usual case stands back, so that the others stand out.
+    <Sign shape="half" tone="none" small>
+      writing
+    </Sign>
+  ) : (
+    <StateMark thing="candidate" state={state} small />
+  );
   const inside: ReactNode = (
     <>
       <span className="seat__top">
@@ -43,7 +54,7 @@ export function Seat({ person, state, signal, progress, left, select }: SeatProp
         {person.need && <span className="need">{person.need}</span>}
       </span>
       <span className="seat__name">{person.name}</span>
-      {signal ? <StateMark thing="signal" state={signal} small /> : <StateMark thing="candidate" state={state} small />}
+      {mark}
       {!gone && (
         <>
           <Ticks {...progress} />

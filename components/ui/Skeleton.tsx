@@ -13,9 +13,9 @@ export function LedgerSkeleton({ rows = 8 }: { rows?: number }) {
           <Skeleton width="min(32rem, 100%)" />
         </div>
       </div>
-      <div className="grid gap-px border-t-2 border-ink pt-9">
+      <div className="grid grid-cols-[minmax(0,1fr)] gap-px border-t-2 border-ink pt-9">
         {Array.from({ length: rows }, (_, row) => (
-          <div key={row} className="flex min-h-11 items-center gap-6 border-b border-rule bg-sheet px-3">
+          <div key={row} className="flex min-h-11 items-center gap-6 overflow-hidden border-b border-rule bg-sheet px-3">
             <Skeleton width={`${14 + ((row * 5) % 9)}rem`} />
             <span className="flex-1" />
             <Skeleton width="3rem" />
