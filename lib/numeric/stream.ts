@@ -1,6 +1,6 @@
 import { sha256 } from '@noble/hashes/sha2';
 import { bytesToHex, utf8ToBytes } from '@noble/hashes/utils';
-import alea from 'seedrandom/lib/alea';
+import alea from 'seedrandom/lib/alea.js';
 
 /** A stream of numbers in [0, 1). */
 export type Stream = () => number;

@@ -1,6 +1,6 @@
 import { createHash } from 'node:crypto';
 import fc from 'fast-check';
-import alea from 'seedrandom/lib/alea';
+import alea from 'seedrandom/lib/alea.js';
 import { describe, expect, it } from 'vitest';
 import { domainOf } from '@/lib/numeric/domain';
 import type { DomainSpec } from '@/lib/numeric/domain';
