@@ -93,3 +93,21 @@ export type RoomCover = {
 export type SaveOutcome =
   | { ok: true; now: number; saved: { question: number; part: string; sequence: number }[] }
   | { ok: false; code: 'ended' | 'other-device' | 'stopped' | 'not-found'; says: string; now: number; claimed: { question: number; part: string; sequence: number }[] };
+
+/** One of a student's own sittings, as Today shows it. */
+export type OwnSitting = {
+  sittingId: string;
+  candidateId: string;
+  title: string;
+  room: string;
+  seat: string;
+  sittingState: string;
+  state: CandidateState;
+  opensAt: Date;
+  startsAt: Date;
+  latestStartAt: Date;
+  minutesAllowed: number;
+  materials: string[];
+  rehearsed: boolean;
+  endedAt: Date | null;
+};

@@ -1,0 +1,16 @@
+import type { Metadata } from 'next';
+import { readClock } from '@/db/clock';
+import { Rehearsal } from '@/components/candidates/Rehearsal';
+import { pageContext } from '@/lib/auth/context';
+import { readSchool } from '@/lib/school/queries';
+import { finishRehearsal } from './actions';
+
+export const metadata: Metadata = { title: 'Rehearsal' };
+
+/** The exam room on a dummy paper, for getting to know it and for trying a device. */
+export default async function RehearsePage() {
+  const context = await pageContext('student');
+  const [now, school] = await Promise.all([readClock(context.db), readSchool(context.db)]);
+  const { zone, locale } = school.settings;
+  return <Rehearsal name={context.actor.name} now={now.getTime()} place={{ zone, locale }} done={finishRehearsal} />;
+}
