@@ -10,12 +10,12 @@ const tidy = (share: number): string => String(Math.round(share * 1e6) / 1e4);
 /** A share kept as 0 to 1 and written in per cent. */
 function ShareInput({ name, label, help }: { name: ShareName; label: string; help?: string }) {
   const { control } = useSheet();
-  const { field, fieldState } = useController<SheetFields, ShareName>({ control, name });
+  const { field: { ref, value, onChange, onBlur }, fieldState } = useController<SheetFields, ShareName>({ control, name });
   return (
     <TextInput
-      label={label} help={help} unit="%" inputMode="decimal" id={name} name={name} ref={field.ref} error={fieldState.error?.message} disabled={field.disabled}
-      defaultValue={tidy(field.value ?? 0)} onBlur={field.onBlur}
-      onChange={(event) => field.onChange(event.target.value.trim() === '' ? Number.NaN : Number(event.target.value.replace(',', '.')) / 100)}
+      label={label} help={help} unit="%" inputMode="decimal" id={name} name={name} ref={ref} error={fieldState.error?.message}
+      defaultValue={tidy(value ?? 0)} onBlur={onBlur}
+      onChange={(event) => onChange(event.target.value.trim() === '' ? Number.NaN : Number(event.target.value.replace(',', '.')) / 100)}
     />
   );
 }

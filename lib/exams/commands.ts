@@ -1,9 +1,9 @@
 import { createHash } from 'node:crypto';
 import { sql } from 'kysely';
-import { z } from 'zod';
 import { record } from '@/lib/audit/commands';
 import { canonical } from '@/lib/audit/model';
 import { accountId, type Context, inTransaction, type LockingContext } from '@/lib/context';
+import { isId } from '@/lib/ids';
 import { done, notFound, refuse, type Result } from '@/lib/result';
 import { readSchool } from '@/lib/school/queries';
 import { emptyExam, examSheet, type ExamSheet, type ExamState, examTitle } from './model';
@@ -11,8 +11,6 @@ import { mayUseExams } from './policy';
 import { readContent, versionIdsOf, versionsById } from './queries';
 import { type ExamEvent, nextExamState } from './rules';
 import { examProblems, sumsOf } from './sums';
-
-const isId = (text: string): boolean => z.guid().safeParse(text).success;
 
 /** A new exam in draft, with the school's rule and declaration. */
 export async function newExam(context: Context, input: { title: string }): Promise<Result<{ examId: string }>> {

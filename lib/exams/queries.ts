@@ -1,11 +1,9 @@
 import { sql } from 'kysely';
-import { z } from 'zod';
 import { type Context, accountId } from '@/lib/context';
+import { isId } from '@/lib/ids';
 import { done, notFound, type Result } from '@/lib/result';
 import { type ExamContent, examContent, type ExamState, type VersionFacts } from './model';
 import { mayUseExams } from './policy';
-
-const isId = (text: string): boolean => z.guid().safeParse(text).success;
 
 /** Stored content as the model has it; what an older release left out takes its default. */
 export const readContent = (stored: unknown): ExamContent => examContent.parse(stored);

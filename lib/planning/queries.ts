@@ -1,6 +1,6 @@
 import { sql } from 'kysely';
-import { z } from 'zod';
 import { type Context, holds } from '@/lib/context';
+import { isId } from '@/lib/ids';
 import { type SchedulableForm, schedulableForms } from '@/lib/exams/queries';
 import { done, notFound, type Result } from '@/lib/result';
 import { readSchool } from '@/lib/school/queries';
@@ -11,8 +11,6 @@ import type { PaperState } from './model';
 import { teachesClass } from './relation';
 import { allowancesOn, type Enrolled, enrolledOn } from './roster';
 import { needSays, noAllowance, type Readiness, readiness, secondsAllowed } from './rules';
-
-const isId = (text: string): boolean => z.guid().safeParse(text).success;
 
 export type SittingRow = {
   id: string;
@@ -130,6 +128,8 @@ export type SittingPage = {
   missing: Enrolled[];
   /** Candidates whose accommodations changed since they were put on the list. */
   changedNeeds: number;
+  /** The reader teaches the class; may change the plan; is one of the proctors. */
+  teaches: boolean;
   mayPlan: boolean;
   mayRun: boolean;
 };
@@ -190,7 +190,7 @@ export async function sittingPage(context: Context, sittingId: string): Promise<
     candidates: candidates.map(({ accountId: _, ...candidate }) => candidate),
     papers: { state: row.papers as PaperState, says: row.papers_says },
     readiness: readiness(facts), ...changes,
-    mayPlan: planned && Boolean(row.teaches), mayRun: Boolean(row.runs),
+    teaches: row.teaches, mayPlan: planned && row.teaches, mayRun: Boolean(row.runs),
   });
 }
 

@@ -1,6 +1,6 @@
 import { sql } from 'kysely';
-import { z } from 'zod';
 import { accountId, type Context, inTransaction, type LockingContext } from '@/lib/context';
+import { isId } from '@/lib/ids';
 import { addJob } from '@/lib/jobs/add';
 import { notFound, refuse, type Result } from '@/lib/result';
 import type { Allowance } from './model';
@@ -18,7 +18,7 @@ type Work<Value> = (planner: Planner, sitting: PlannedSitting) => Promise<Result
 /** Authorises, locks the sitting and runs `work`, whatever its state; missing and forbidden look alike. */
 export async function withTaught<Value>(context: Context, sittingId: string, work: Work<Value>): Promise<Result<Value>> {
   const me = accountId(context.actor);
-  if (!me || !z.guid().safeParse(sittingId).success) return notFound();
+  if (!me || !isId(sittingId)) return notFound();
   return inTransaction(context, async (locked) => {
     const sitting = await lockSitting(locked, sittingId);
     return sitting ? work({ ...locked, me }, sitting) : notFound();
