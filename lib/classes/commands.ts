@@ -111,22 +111,22 @@ export async function enrol(context: Context, classId: string, accountIds: reado
   });
 }
 
-/** Ends an enrolment today. Sittings planned before keep the candidate until somebody takes them off. */
-export async function endEnrolment(context: Context, classId: string, accountId: string): Promise<Result<null>> {
-  if (!mayManagePeople(context.actor) || !isId(classId) || !isId(accountId)) return notFound();
+/** Ends enrolments: from today on these students are not in the class. Sittings planned before keep the candidates until somebody takes them off. */
+export async function endEnrolments(context: Context, classId: string, accountIds: readonly string[]): Promise<Result<{ ended: number }>> {
+  if (!mayManagePeople(context.actor) || ![classId, ...accountIds].every(isId) || accountIds.length === 0) return notFound();
   return inTransaction(context, async (locked) => {
     const day = await today(locked.db);
-    const row = await locked.db
+    const rows = await locked.db
       .updateTable('enrolment')
-      // The day before: from now on the student is not in the class. One enrolled today leaves no day at all.
+      // The day before: one enrolled today leaves no day at all.
       .set({ until: sql`${day}::date - 1` })
       .where('class_id', '=', classId)
-      .where('account_id', '=', accountId)
+      .where('account_id', 'in', [...accountIds])
       .where((where) => where.or([where('until', 'is', null), where('until', '>=', day)]))
       .returning('account_id')
-      .executeTakeFirst();
-    if (!row) return notFound();
-    await record(locked, { kind: 'enrolment.ended', subject: 'account', subjectId: accountId, data: { class: classId } });
-    return done(null);
+      .execute();
+    if (rows.length === 0) return notFound();
+    for (const row of rows) await record(locked, { kind: 'enrolment.ended', subject: 'account', subjectId: row.account_id, data: { class: classId } });
+    return done({ ended: rows.length });
   });
 }

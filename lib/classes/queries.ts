@@ -1,6 +1,7 @@
 import { sql } from 'kysely';
 import { type Context, holds } from '@/lib/context';
 import { isId } from '@/lib/ids';
+import type { AccountState } from '@/lib/people/model';
 import { mayManagePeople } from '@/lib/people/policy';
 import { done, notFound, type Result } from '@/lib/result';
 import { today } from '@/lib/school/today';
@@ -52,7 +53,7 @@ export async function listClasses(context: Context): Promise<Result<ClassRow[]>>
   return done(rows.map(toRow));
 }
 
-export type Member = { accountId: string; name: string; sortName: string; email: string | null; learnerNumber: string | null; state: string; since: string; until: string | null };
+export type Member = { accountId: string; name: string; sortName: string; email: string | null; learnerNumber: string | null; state: AccountState; since: string; until: string | null };
 export type Choice = { id: string; name: string; detail: string };
 export type ClassPage = { row: ClassRow; instructorIds: string[]; members: Member[]; others: Choice[] };
 
@@ -71,7 +72,8 @@ export async function readClass(context: Context, id: string): Promise<Result<Cl
   const taught = await context.db.selectFrom('class_instructor').where('class_id', '=', id).select('account_id').execute();
   const here = new Set(members.filter((member) => member.until === null).map((member) => member.accountId));
   const others = (await peopleWith(context, 'student')).filter((student) => !here.has(student.id));
-  return done({ row: toRow(row), instructorIds: taught.map((one) => one.account_id), members, others });
+  const known = members.map((member) => ({ ...member, state: member.state as AccountState }));
+  return done({ row: toRow(row), instructorIds: taught.map((one) => one.account_id), members: known, others });
 }
 
 async function peopleWith(context: Context, role: 'student' | 'instructor'): Promise<Choice[]> {

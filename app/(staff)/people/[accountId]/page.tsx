@@ -13,8 +13,9 @@ import { listAccommodations } from '@/lib/accommodations/queries';
 import { pageContext } from '@/lib/auth/context';
 import { readPerson } from '@/lib/people/queries';
 import { eventInWords } from '@/lib/people/words';
+import { showDay } from '@/lib/school/days';
 import { readSchool } from '@/lib/school/queries';
-import { fromLocal, showDate, showMoment } from '@/lib/school/times';
+import { showMoment } from '@/lib/school/times';
 import { today } from '@/lib/school/today';
 import { closePerson, end, give, reopenPerson, saveParticulars, saveRoles, sendLinkTo } from '../actions';
 
@@ -35,10 +36,7 @@ export default async function PersonPage(props: Props) {
   const { context, person, classes, openLink, events } = await load(props);
   const [accommodations, { settings }, day] = await Promise.all([listAccommodations(context, person.id), readSchool(context.db), today(context.db)]);
   if (!accommodations.ok) notFound();
-  const date = (text: string) => {
-    const time = fromLocal(text, settings);
-    return time ? showDate(time, settings) : text;
-  };
+  const date = (text: string) => showDay(text, settings);
   const entries = events.map((event) => ({
     key: String(event.id),
     at: showMoment(event.at, settings),
