@@ -19,7 +19,7 @@ const config = {
   productionBrowserSourceMaps: false,
   // Live streams must not be held back by compression; a proxy before us compresses the rest.
   compress: false,
-  serverExternalPackages: ['pg', 'kysely', 'graphile-worker', 'pdfkit', 'nodemailer', 'pino', '@node-rs/argon2', 'mathjs'],
+  serverExternalPackages: ['pg', 'kysely', 'graphile-worker', 'pdfkit', 'nodemailer', 'mailparser', 'pino', '@node-rs/argon2', 'mathjs'],
   allowedDevOrigins: ['127.0.0.1', 'localhost'],
   devIndicators: false,
 };
