@@ -59,7 +59,7 @@ export function CheckPane({ templateId, first, changed, save, actions, onSeed }:
     return result;
   });
   return (
-    <div className="grid gap-5">
+    <div className="grid grid-cols-[minmax(0,1fr)] gap-5">
       <div className="flex flex-wrap items-center gap-2">
         <SelectBox
           aria-label="Draws to make" value={String(draws)} onChange={(event) => setDraws(drawChoices.find((choice) => String(choice) === event.target.value) ?? 2_000)}

@@ -88,7 +88,7 @@ function Drawn({ draw, locale }: { draw: DrawShown; locale: string }) {
   const looking = { answerOf: () => '', stateOf: () => 'blank' as const };
   const wrong = draw.parts.some((part) => part.missteps.length > 0 || part.options.length > 0);
   return (
-    <div className="grid gap-6">
+    <div className="grid grid-cols-[minmax(0,1fr)] gap-6">
       <section aria-label="The question as a candidate sees it">
         <QuestionSheet question={draw.question} place={{ number: 1, of: 1 }} notation={notationOf(locale)} answering={looking} />
       </section>
@@ -104,7 +104,7 @@ function Drawn({ draw, locale }: { draw: DrawShown; locale: string }) {
       )}
       <section className="section--cap" aria-labelledby="solution-title">
         <h2 id="solution-title">Solution in these numbers</h2>
-        <div className="pt-3"><MathText html={draw.solutionHtml} /></div>
+        <div className="overflow-x-auto pt-3"><MathText html={draw.solutionHtml} /></div>
       </section>
     </div>
   );
@@ -117,7 +117,7 @@ export function DrawPane({ look, seed, onSeed, locale }: { look: Look; seed: str
   const { preview, error, drawing } = look;
   const old = preview?.draw && preview.draw.seed !== seed;
   return (
-    <div className="grid gap-4">
+    <div className="grid grid-cols-[minmax(0,1fr)] gap-4">
       <div className="flex flex-wrap items-center justify-between gap-3">
         <SeedBar seed={seed} onSeed={onSeed} />
         <span className="text-13 text-ink-soft" role="status">

@@ -82,7 +82,7 @@ export function Findings({ report, onSeed }: { report: StoredReport } & Seeds) {
   const { problems, excused, draws, bins, units, missteps, examples, redraws, distinct } = report;
   const figures = Object.entries(bins).filter(([, bars]) => bars.length > 0);
   return (
-    <div className="grid gap-6">
+    <div className="grid grid-cols-[minmax(0,1fr)] gap-6">
       {problems.length > 0 && <ProblemGroups problems={problems} draws={draws} onSeed={onSeed} />}
       {excused.length > 0 && <Section title="Answered by a reason in the text"><ProblemGroups problems={excused} draws={draws} onSeed={onSeed} excused /></Section>}
       <p className="text-15 text-ink-soft">

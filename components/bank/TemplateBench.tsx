@@ -76,7 +76,7 @@ export function TemplateBench({ template, areaTitle, locale, actions }: Template
       <FormGuard dirty={changed} />
       <Head template={template} areaTitle={areaTitle} bench={bench} readOnly={readOnly} title={look.preview?.facts?.title ?? template.title} />
       {answer && !answer.ok && <p className="error">{answer.says}</p>}
-      <div className="grid gap-4 md:grid-cols-2 xl:grid-cols-[minmax(0,31rem)_minmax(0,1fr)_minmax(0,24rem)]">
+      <div className="grid gap-4 md:grid-cols-[minmax(0,3fr)_minmax(0,2fr)] xl:grid-cols-[minmax(0,31rem)_minmax(0,1fr)_minmax(0,24rem)]">
         <form id="template-text" action={plainSave} className="min-w-0 md:col-span-2 xl:col-span-1" onSubmit={(event) => (event.preventDefault(), void bench.save())}>
           <input type="hidden" name="id" value={template.id} />
           <input type="hidden" name="revision" value={bench.revision} />

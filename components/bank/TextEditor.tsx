@@ -46,7 +46,7 @@ export function TextEditor({ text, problems, readOnly, onChange, onSave, ref }: 
   useImperativeHandle(ref, () => ({ goTo: (problem) => editor.current && editor.current.tools.goTo(editor.current.view, problem) }), []);
   return (
     <div className="flex min-h-0 flex-1 flex-col">
-      <div ref={place} className={ready ? 'min-h-0 flex-1' : 'hidden'} />
+      <div ref={place} className={ready ? 'h-[28rem] min-h-0 xl:h-auto xl:flex-1' : 'hidden'} />
       <textarea
         name="text" aria-label="Text of the template" aria-describedby="editor-help" spellCheck={false} value={text} readOnly={readOnly} hidden={ready}
         onChange={(event) => onChange(event.target.value)} className="min-h-96 w-full flex-1 resize-y bg-sheet p-3 font-mono text-13"
