@@ -5,7 +5,6 @@ import type { Complaints } from './complaints';
 import type { GivenPlan } from './plan';
 import type { Path } from './yaml';
 
-/** Of a name that could not be understood nothing is known, so that one fault is one complaint. */
 const unknown: Quantity = { dimension: null, factor: null };
 
 /** What each name and part of a template measures, and whether a formula's dimension is that of its unit. */
@@ -28,8 +27,14 @@ export class Dimensions {
     this.parts.set(part, unit);
   }
 
+  /** Of a name that was complained of nothing is known: what uses it is not complained of again. */
+  private isKnown({ names, parts }: Expression): boolean {
+    return names.every((name) => this.names.has(name)) && parts.every((part) => this.parts.has(part));
+  }
+
   /** Finds what a derived value measures that states no unit. */
   infer(name: string, expression: Expression, path: Path): void {
+    if (!this.isKnown(expression)) return;
     const found = dimensionOf(expression, this.units);
     if (found.ok) this.names.set(name, found.value);
     else this.complaints.add('dimension', found.problem.says, path);
@@ -40,6 +45,7 @@ export class Dimensions {
    * beside one only what cannot be added or compared is a fault.
    */
   check(expression: Expression, target: Unit, path: Path, tradeConstant: boolean): void {
+    if (!this.isKnown(expression)) return;
     if (!tradeConstant) {
       const problem = checkDimension(expression, this.units, target);
       if (problem !== null) this.complaints.add('dimension', problem.says, path);

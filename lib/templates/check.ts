@@ -1,3 +1,4 @@
+import { ExpressionError } from '@/lib/expressions/compile';
 import { deriveRounded, drawValues, type DrawnValues, mostRedraws } from './values';
 import { completeDraw, defaultLocale } from './draw';
 import { binsOf, type Bin, quantilesOf, type Quantiles } from './distribution';
@@ -5,6 +6,7 @@ import { problemsOfSpread, Spread } from './spread';
 import { checkExamples } from './examples';
 import type { Examiner, Rounded, Scope, Sight } from './kinds/kind';
 import { Tally } from './kinds/tally';
+import { Leaks } from './leaks';
 import type { Template } from './plan';
 import type { Problem, ProblemCode } from './problem';
 
@@ -25,6 +27,8 @@ export interface CheckProgress { done: number; draws: number; problems: number }
 
 export const defaultDraws = 2000;
 const stepSize = 50;
+/** Draws without a paper after which a check need not go on: each costs 500 redraws. */
+const enoughInVain = 10;
 
 /** Counts each kind of problem over the draws, by code, part and text. */
 class Ledger {
@@ -66,8 +70,10 @@ const roundedScopes = (template: Template, { scope }: DrawnValues): Rounded => {
 class Check {
   readonly ledger = new Ledger();
   readonly spread: Spread;
+  private readonly leaks: Leaks;
   readonly examiners: Examiner[];
   readonly redraws: number[] = [];
+  private readonly inVain = new Tally();
   readonly failures: number[];
   done = 0;
 
@@ -75,6 +81,7 @@ class Check {
     const { plan } = template;
     this.examiners = plan.parts.map((part) => part.examiner());
     this.spread = new Spread(plan.parts.map(({ part }) => part));
+    this.leaks = new Leaks(template);
     this.failures = plan.requirements.map(() => 0);
   }
 
@@ -82,17 +89,20 @@ class Check {
     this.done += 1;
     try {
       const values = drawValues(this.template, seed, this.failures);
+      if (values.ok) this.redraws.push(values.value.redraws);
       if (values.ok) this.lookAt(seed, values.value);
-      else this.ledger.note('requirement-never', this.neverText(), seed);
-      this.redraws.push(values.ok ? values.value.redraws : mostRedraws + 1);
+      else this.inVain.add(seed);
     } catch (error) {
-      this.ledger.note('not-finite', `A formula has no value: ${error instanceof Error ? error.message : String(error)}`, seed);
+      if (!(error instanceof ExpressionError)) throw error;
+      this.ledger.note('not-finite', `A formula has no value: ${error.message}`, seed);
     }
   }
 
-  private neverText(): string {
-    const worst = this.failures.indexOf(Math.max(...this.failures));
-    return `No draw held all requirements in ${mostRedraws} redraws; "${this.template.plan.requirements[worst]?.source ?? ''}" failed most: loosen it or change the givens.`;
+  get isHopeless(): boolean {
+    return this.inVain.count >= enoughInVain;
+  }
+  private get worstRequirement(): string {
+    return this.template.plan.requirements[this.failures.indexOf(Math.max(...this.failures))]?.source ?? '';
   }
 
   private lookAt(seed: string, values: DrawnValues): void {
@@ -109,22 +119,27 @@ class Check {
       examiner.look(sight, rounded, (code, says) => this.ledger.note(code, says, seed, drawn.part));
     });
     this.spread.add(seed, draw.parts);
+    this.leaks.look(draw);
   }
 
   problems(): Problem[] {
     const { template } = this;
     const parts = template.plan.parts.flatMap(({ part }, index) => (this.examiners[index]?.finish() ?? []).map((found) => ({ ...found, part })));
-    return [...this.ledger.problems(this.done), ...parts, ...this.redrawProblems(), ...problemsOfSpread(this.spread, this.done), ...checkExamples(template)];
+    return [...this.ledger.problems(this.done), ...parts, ...this.leaks.finish(), ...this.redrawProblems(), ...problemsOfSpread(this.spread, this.done), ...checkExamples(template)];
   }
 
   private redrawProblems(): Problem[] {
-    const thrown = this.redraws.reduce((sum, count) => sum + count, 0);
+    const { count, seeds } = this.inVain;
+    if (count > 0) {
+      const says = `No draw held all requirements in ${mostRedraws} redraws; "${this.worstRequirement}" failed most: loosen it or change the givens.`;
+      return [{ code: 'requirement-never', count, share: count / this.done, seeds, says }];
+    }
+    const thrown = this.redraws.reduce((sum, one) => sum + one, 0);
     const drawn = this.done + thrown;
-    if (thrown <= this.done || this.redraws.some((count) => count > mostRedraws)) return [];
-    const worst = this.failures.indexOf(Math.max(...this.failures));
+    if (thrown <= this.done) return [];
     return [{
       code: 'redraws', count: thrown, share: thrown / drawn, seeds: [],
-      says: `Only ${this.done} of ${drawn} draws held the requirements; "${this.template.plan.requirements[worst]?.source ?? ''}" failed most: narrow the givens so that at least half do.`,
+      says: `Only ${this.done} of ${drawn} draws held the requirements; "${this.worstRequirement}" failed most: narrow the givens so that at least half do.`,
     }];
   }
 
@@ -134,11 +149,10 @@ class Check {
     const excusedBy = (problem: Problem) => Object.hasOwn(reasons, problem.code);
     const all = this.problems();
     const problems = all.filter((problem) => !excusedBy(problem));
-    const kept = this.redraws.filter((count) => count <= mostRedraws);
-    const mean = kept.length === 0 ? 0 : kept.reduce((sum, count) => sum + count, 0) / kept.length;
+    const mean = this.redraws.length === 0 ? 0 : this.redraws.reduce((sum, count) => sum + count, 0) / this.redraws.length;
     return {
       template: template.head.template, ok: problems.length === 0, draws: this.done, distinct: this.spread.distinct,
-      redraws: { mean: Math.round(mean * 1000) / 1000, max: Math.max(0, ...kept) },
+      redraws: { mean: Math.round(mean * 1000) / 1000, max: this.redraws.reduce((most, count) => Math.max(most, count), 0) },
       parts: Object.fromEntries(this.spread.values.map(([part, values]) => [part, quantilesOf(values)])),
       bins: Object.fromEntries(this.spread.values.map(([part, values]) => [part, binsOf(values)])),
       problems, excused: all.filter(excusedBy),
@@ -150,12 +164,13 @@ export interface CheckOptions { draws?: number; onProgress?: (progress: CheckPro
 
 /**
  * Checks a template over many draws, in steps: yields after each 50 draws so that a job can show progress, let others
- * work, or stop. The seeds are check-0, check-1, …
+ * work, or stop. It ends early where draw after draw never holds the requirements. The seeds are check-0, check-1, …
  */
 export function* checkInSteps(template: Template, draws: number = defaultDraws): Generator<CheckProgress, CheckReport> {
   const check = new Check(template);
   for (let index = 0; index < draws; index += 1) {
     check.look(`check-${index}`);
+    if (check.isHopeless) break;
     if (check.done % stepSize === 0 || check.done === draws) yield { done: check.done, draws, problems: check.ledger.size };
   }
   return check.report();

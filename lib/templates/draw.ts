@@ -1,4 +1,4 @@
-import type { Value } from '@/lib/expressions/compile';
+import { ExpressionError, type Value } from '@/lib/expressions/compile';
 import { decimalsOf } from '@/lib/numeric/digits';
 import { type Notation, notationOf } from '@/lib/numeric/notation';
 import { printQuantity } from '@/lib/numeric/printer';
@@ -78,6 +78,7 @@ export function drawTemplate(template: Template, seed: string, { locale = defaul
     if (!values.ok) return refuse(values.code, values.says);
     return { ok: true, value: completeDraw(template, seed, locale, values.value) };
   } catch (error) {
-    return refuse('not-finite', `A formula has no value for seed ${seed}: ${error instanceof Error ? error.message : String(error)}`);
+    if (!(error instanceof ExpressionError)) throw error;
+    return refuse('not-finite', `A formula has no value for seed ${seed}: ${error.message}`);
   }
 }

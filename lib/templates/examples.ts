@@ -1,4 +1,4 @@
-import type { Value } from '@/lib/expressions/compile';
+import { ExpressionError, type Value } from '@/lib/expressions/compile';
 import { readNumber } from '@/lib/numeric/reader';
 import type { Scope } from './kinds/kind';
 import type { ExampleText } from './model';
@@ -37,7 +37,8 @@ const faultsOf = (template: Template, example: ExampleText): { part?: string; sa
       return agrees === true ? [] : [{ part: plan.part, says: agrees }];
     });
   } catch (error) {
-    return [{ says: `a formula has no value there: ${error instanceof Error ? error.message : String(error)}` }];
+    if (!(error instanceof ExpressionError)) throw error;
+    return [{ says: `a formula has no value there: ${error.message}` }];
   }
 };
 

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import type { Expression, Value } from '@/lib/expressions/compile';
+import { type Expression, ExpressionError, type Value } from '@/lib/expressions/compile';
 import { roundToFigures } from '@/lib/numeric/digits';
 import type { Notation } from '@/lib/numeric/notation';
 import { numberToTex, printPolar, printQuantity, printRectangular, quantityToTex } from '@/lib/numeric/printer';
@@ -108,7 +108,8 @@ export const amountOf = (value: Value): Amount | null => {
 export const evaluateAmount = (expression: Expression, scope: Scope): Amount | null => {
   try {
     return amountOf(expression.evaluate(scope));
-  } catch {
+  } catch (error) {
+    if (!(error instanceof ExpressionError)) throw error;
     return null;
   }
 };
