@@ -8,7 +8,8 @@ export async function up(db: Kysely<unknown>): Promise<void> {
     question integer not null,
     part text not null,
     issue integer not null,
-    awarded numeric(6,2) not null check (awarded >= 0),
+    -- Below zero only where the exam takes marks away for a wrong option.
+    awarded numeric(6,2) not null,
     of numeric(6,2) not null,
     verdict text not null check (verdict in ('correct', 'carried', 'misstep', 'wrong', 'blank', 'unread', 'for-marker')),
     rule text not null,
@@ -21,7 +22,7 @@ export async function up(db: Kysely<unknown>): Promise<void> {
     reason text not null default '',
     at timestamptz not null default app.now(),
     primary key (candidate_id, question, part, issue),
-    check (awarded <= of),
+    check (abs(awarded) <= of),
     check (marker_id is null or reason <> '')
   )`.execute(db);
   await sql`create table result (

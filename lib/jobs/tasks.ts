@@ -4,6 +4,7 @@ import { checkTemplateJob } from '@/lib/bank/jobs';
 import { config } from '@/lib/config';
 import { sendMail } from '@/lib/mail/send';
 import { drawPapers } from '@/lib/planning/jobs';
+import { markPaperJob, markSittingJob } from '@/lib/results/jobs';
 import type { JobName, JobPayloads } from './model';
 
 export type JobTools = {
@@ -25,5 +26,7 @@ export const handlers: { readonly [Name in JobName]: Handler<Name> } = {
   },
   'check-template': (payload, { db, signal }) => checkTemplateJob(db, payload, signal),
   'send-reset-link': (payload, { db }) => sendResetLink(db, payload),
+  'mark-paper': (payload, { db }) => markPaperJob(db, payload),
+  'mark-sitting': (payload, { db, signal }) => markSittingJob(db, payload, signal),
   'send-mail': ({ mailId }, { db }) => sendMail(db, config().smtpUrl, mailId),
 };
