@@ -74,7 +74,7 @@ function matchPrefix(plan: NumberPlan, value: Amount, keys: Keys, marking: Marki
 }
 
 const unreadOutcome = (code: string, says: string, hasWorking: boolean): Outcome => {
-  if (code === 'blank') return { awarded: 0, verdict: 'blank', rule: 'blank', says: 'Nothing was written here.' };
+  if (code === 'blank' && !hasWorking) return { awarded: 0, verdict: 'blank', rule: 'blank', says: 'Nothing was written here.' };
   if (hasWorking) return { awarded: 0, verdict: 'for-marker', rule: 'working', says: `${says} The working goes to a marker.` };
   return code === 'dimension' ? { awarded: 0, verdict: 'wrong', rule: 'dimension', says } : { awarded: 0, verdict: 'unread', rule: 'unread', says };
 };

@@ -1,3 +1,4 @@
+import { roundToDecimals } from '@/lib/numeric/digits';
 import type { ProblemCode } from '../problem';
 import { angleBetween, type Amount, distance, isFiniteAmount, magnitude, matches } from '../tolerance';
 import type { DrawnPart, Note, Rounded, Scope, Sight } from './kind';
@@ -10,6 +11,12 @@ const percent = (share: number): string => `${(share * 100).toLocaleString('en',
 
 /** The value below which the given share of sorted numbers lies. */
 const quantile = (sorted: readonly number[], share: number): number => sorted[Math.min(sorted.length - 1, Math.max(0, Math.ceil(share * sorted.length) - 1))] ?? NaN;
+
+/** The key as it is printed, which must be the key itself where only the exact value is right. */
+const asPrinted = (key: Amount, { precision }: Quantity): Amount => {
+  if (typeof key !== 'number') return key;
+  return 'decimals' in precision ? roundToDecimals(key, precision.decimals) : roundAmount(key, precision.figures);
+};
 
 /**
  * Checks a quantity over many draws: is its key finite and sensible, does the tolerance leave honest rounding in and
@@ -56,7 +63,7 @@ export class QuantityExaminer {
     const allowance = defaultAllowance(this.quantity, key);
     const again = evaluateAmount(this.quantity.key, rounded(figures));
     if (again === null || !isFiniteAmount(again)) return Infinity;
-    if (allowance.tolerance === 0) return matches(again, key, allowance) ? 0 : Infinity;
+    if (allowance.tolerance === 0) return matches(again, key, allowance) && matches(asPrinted(key, this.quantity), key, allowance) ? 0 : Infinity;
     const written = roundAmount(again, figures);
     const linear = Math.abs(magnitude(written) - magnitude(key));
     if (typeof key === 'number' && typeof written === 'number') return (Math.abs(written - key) - Math.abs(key) * 1e-12) / allowance.tolerance;

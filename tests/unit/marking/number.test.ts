@@ -79,6 +79,7 @@ describe('marking numbers', () => {
 
   it('sends an unmatched answer with working to a marker, and only where working is asked', () => {
     expect(mark({ c: '7000 W', 'c.working': 'E x I' }).parts[2]).toMatchObject({ verdict: 'for-marker', awarded: 0, rule: 'working' });
+    expect(mark({ 'c.working': 'E x I' }).parts[2]).toMatchObject({ verdict: 'for-marker', awarded: 0 });
     expect(mark({ c: '7000 W', 'c.working': '  ' }).parts[2]?.verdict).toBe('wrong');
     expect(mark({ b: '100 V', 'b.working': 'E x I' }).parts[1]?.verdict).toBe('wrong');
   });

@@ -57,6 +57,7 @@ describe('the check', () => {
     ['misstep-accepted', change('key: V + Ia * Ra', 'key: V - 1.02 * Ia * Ra'), 1],
     ['window', change('key: V + Ia * Ra', 'key: V - 1.1 * Ia * Ra'), null],
     ['window', change('marks: 2', 'marks: 2\n    accept: { or: 0.01 V }'), null],
+    ['window', change('unit: V\n    marks: 2\n    figures: 4', 'unit: V\n    marks: 2\n    accept: exact\n    figures: 2'), null],
     ['sign-change', change('key: V - Ia * Ra', 'key: V - 240 + Ia * Ra * 0'), null],
     ['example', change('solution:', 'examples:\n  - { source: A book of motors, obtained: read, given: { V: 240, Ra: 0.4, Ia: 50 }, expect: { a: 223 V }, within: 0.5 percent }\nsolution:'), 1],
   ])('finds %s', (code, text, share) => {
