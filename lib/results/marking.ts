@@ -84,26 +84,28 @@ const lockCandidate = (db: Transaction<DB>, candidateId: string) =>
 const didNotSit = (candidate: { state: string; started_at: Date | null }): boolean =>
   candidate.state === 'absent' || candidate.state === 'refused' || (candidate.state === 'withdrawn' && candidate.started_at === null);
 
+/** As `markPaper`, in a transaction that is open. */
+export async function markPaperIn(trx: Transaction<DB>, candidateId: string, templates: PaperTemplates): Promise<MarkOutcome> {
+  const context: LockingContext = { db: trx, actor: marker };
+  const candidate = await lockCandidate(trx, candidateId);
+  if (!candidate) return 'waiting';
+  const absent = didNotSit(candidate);
+  if (absent ? !['closed', 'reconciled'].includes(candidate.sitting_state) : !endedStates.includes(candidate.state as CandidateState)) return 'waiting';
+  const before = await newestResult(trx, candidateId);
+  const facts: ResultFacts = before ? { state: before.state as ResultFacts['state'], withheld: before.withheld } : { state: 'provisional', withheld: false };
+  if (!nextResult(facts, 'mark').ok) return 'settled';
+  const changed = absent ? 0 : await markAnswers(context, candidateId, readContent(candidate.content).marking, templates);
+  const next: ResultFacts = changed > 0 || !before ? { ...facts, state: 'provisional' } : facts;
+  const renewed = await renewResult(context, candidateId, before, next, { sat: !absent, why: '' });
+  return changed > 0 || renewed ? 'marked' : 'unchanged';
+}
+
 /**
  * Marks one ended paper from its stored draws, in one transaction, and stores the result. Marking again with the same outcome
  * writes nothing; a person's decision on an answer stands. For the job that hand-in, time-out and closing have queued.
  */
-export async function markPaper(db: Kysely<DB>, candidateId: string, templates = new PaperTemplates(db)): Promise<MarkOutcome> {
-  return db.transaction().execute(async (trx): Promise<MarkOutcome> => {
-    const context: LockingContext = { db: trx, actor: marker };
-    const candidate = await lockCandidate(trx, candidateId);
-    if (!candidate) return 'waiting';
-    const absent = didNotSit(candidate);
-    if (absent ? !['closed', 'reconciled'].includes(candidate.sitting_state) : !endedStates.includes(candidate.state as CandidateState)) return 'waiting';
-    const before = await newestResult(trx, candidateId);
-    const facts: ResultFacts = before ? { state: before.state as ResultFacts['state'], withheld: before.withheld } : { state: 'provisional', withheld: false };
-    if (!nextResult(facts, 'mark').ok) return 'settled';
-    const changed = absent ? 0 : await markAnswers(context, candidateId, readContent(candidate.content).marking, templates);
-    const next: ResultFacts = changed > 0 || !before ? { ...facts, state: 'provisional' } : facts;
-    const renewed = await renewResult(context, candidateId, before, next, { sat: !absent, why: '' });
-    return changed > 0 || renewed ? 'marked' : 'unchanged';
-  });
-}
+export const markPaper = (db: Kysely<DB>, candidateId: string, templates = new PaperTemplates(db)): Promise<MarkOutcome> =>
+  db.transaction().execute((trx) => markPaperIn(trx, candidateId, templates));
 
 /** Marks every ended paper of a sitting, one transaction a paper; those who never sat get their result too. */
 export async function markSitting(db: Kysely<DB>, sittingId: string, signal?: AbortSignal): Promise<Record<MarkOutcome, number>> {
