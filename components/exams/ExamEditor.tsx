@@ -61,19 +61,19 @@ function Sections({ versions, areas, locked }: { versions: Facts; areas: Props['
 }
 
 /** The sums of what the fields hold now, whether it is valid or not. */
-function useSums(versions: Facts) {
+function useSums(versions: Facts, areas: Props['areas']) {
   const { watch } = useSheet();
   const content = watch('content');
   const minutes = Number.isFinite(content.minutes) ? content.minutes : 0;
   const parsed = examSheet.shape.content.safeParse({ ...content, minutes });
   const sums = sumsOf(content, versions);
-  return { sums, minutes, sections: content.sections.map((section) => section.title), problems: parsed.success ? examProblems(parsed.data, versions) : [], valid: parsed.success };
+  return { sums, minutes, sections: content.sections.map((section) => section.title), problems: parsed.success ? examProblems(parsed.data, versions, areas) : [], valid: parsed.success };
 }
 
-function Beside({ exam, versions, unsaved, review, children }: { exam: Exam; versions: Facts; unsaved: boolean; review: ReviewActions; children: ReactNode }) {
-  const { sums, minutes, sections, problems, valid } = useSums(versions);
+function Beside({ exam, facts, unsaved, review, children }: { exam: Exam; facts: { versions: Facts; areas: Props['areas'] }; unsaved: boolean; review: ReviewActions; children: ReactNode }) {
+  const { sums, minutes, sections, problems, valid } = useSums(facts.versions, facts.areas);
   return (
-    <aside aria-label="Sums, review and forms">
+    <aside aria-label="Sums, review and forms" className="xl:sticky xl:top-4 xl:max-h-[calc(100vh-2rem)] xl:overflow-y-auto xl:pr-1">
       <SumsPanel sums={sums} minutes={minutes} sections={sections} problems={problems} />
       <ReviewPanel exam={exam} unsaved={unsaved} stopped={!valid || problems.some((problem) => problem.stops)} actions={review} />
       {children}
@@ -82,14 +82,14 @@ function Beside({ exam, versions, unsaved, review, children }: { exam: Exam; ver
 }
 
 function Blueprint({ versions, areas, locked }: { versions: Facts; areas: Props['areas']; locked: boolean }) {
-  const { sums } = useSums(versions);
+  const { sums } = useSums(versions, areas);
   return <BlueprintFields coverage={sums.coverage} areas={areas} locked={locked} />;
 }
 
 function useSaving(exam: Exam, save: Props['save']) {
   const [revision, setRevision] = useState(exam.revision);
   const [says, setSays] = useState<{ kind: 'ok' | 'stop'; text: string } | null>(null);
-  const form = useForm<SheetFields, unknown, ExamSheet>({ resolver: zodResolver(examSheet), defaultValues: { title: exam.title, revision: exam.revision, content: exam.content } });
+  const form = useForm<SheetFields, unknown, ExamSheet>({ resolver: zodResolver(examSheet), shouldFocusError: false, defaultValues: { title: exam.title, revision: exam.revision, content: exam.content } });
   const submit = form.handleSubmit(async (sheet) => {
     setSays(null);
     const result = await save({ examId: exam.id, sheet: { ...sheet, revision } }).catch(() => null);
@@ -129,7 +129,7 @@ export function ExamEditor({ exam, versions, areas, save, review, children }: Pr
           </div>
           {says?.kind === 'stop' && <Notice kind="stop" live>{says.text}</Notice>}
         </form>
-        <Beside exam={{ ...exam, revision }} versions={facts} unsaved={isDirty} review={review}>{children}</Beside>
+        <Beside exam={{ ...exam, revision }} facts={{ versions: facts, areas }} unsaved={isDirty} review={review}>{children}</Beside>
       </div>
     </FormProvider>
   );

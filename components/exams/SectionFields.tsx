@@ -32,7 +32,7 @@ export function SectionFields({ index, first, versions, areas, locked, onMove }:
   return (
     <fieldset className="sheet sheet--pad mt-4 min-w-0">
       <legend className="vh">Section {index + 1}</legend>
-      <div className="grid gap-4 sm:grid-cols-[minmax(0,1fr)_11rem]">
+      <div className="grid gap-4 sm:grid-cols-[minmax(0,1fr)_16rem]">
         <TextInput label={`Title of section ${index + 1}`} optional error={wrong?.title?.message} {...register(`${path}.title`)} id={`${path}.title`} />
         <TextInput
           label="Least share for a pass" optional unit="%" inputMode="decimal" error={wrong?.leastPercent?.message}
@@ -40,7 +40,7 @@ export function SectionFields({ index, first, versions, areas, locked, onMove }:
         />
       </div>
       <div className="mt-4">
-        <TextArea label="Instructions for this section" optional rows={2} error={wrong?.instructions?.message} {...register(`${path}.instructions`)} id={`${path}.instructions`} />
+        <TextArea label="Instructions for this section" optional rows={2} className="min-h-16" error={wrong?.instructions?.message} {...register(`${path}.instructions`)} id={`${path}.instructions`} />
       </div>
       <ol className="mt-4 border-t border-ink" aria-label={`Questions of section ${index + 1}`}>
         {items.fields.map((item, place) => (

@@ -6,9 +6,9 @@ export function Caution({ title, children }: { title: string; children?: ReactNo
   return (
     <div className="caution" role="note" aria-label="Caution">
       <Shape name="tri" />
-      <p>
+      <div>
         <b>{title}</b> {children}
-      </p>
+      </div>
     </div>
   );
 }

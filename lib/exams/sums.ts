@@ -70,8 +70,8 @@ function itemProblems(content: Pick<ExamContent, 'sections'>, versions: Facts): 
   return problems;
 }
 
-/** Reads an exam through: what must be put right before a review, and what only wants a look. */
-export function examProblems(content: ExamContent, versions: Facts): ExamProblem[] {
+/** Reads an exam through: what must be put right before a review, and what only wants a look. `areas` are titles by name. */
+export function examProblems(content: ExamContent, versions: Facts, areas: Readonly<Record<string, string>> = {}): ExamProblem[] {
   const sums = sumsOf(content, versions);
   const problems: ExamProblem[] = [];
   if (content.sections.length === 0) problems.push({ code: 'no-section', stops: true, says: 'There is no section yet: add one and choose its questions.' });
@@ -86,7 +86,7 @@ export function examProblems(content: ExamContent, versions: Facts): ExamProblem
   }
   for (const row of sums.coverage) {
     if (row.wanted !== null && row.wanted !== row.marks) {
-      problems.push({ code: 'blueprint', stops: false, says: `${row.area}, level ${row.level}: the blueprint wants ${one(row.wanted, 'mark')}, the exam has ${row.marks}.` });
+      problems.push({ code: 'blueprint', stops: false, says: `${areas[row.area] ?? row.area}, level ${row.level}: the blueprint wants ${one(row.wanted, 'mark')}, the exam has ${row.marks}.` });
     }
   }
   return problems;

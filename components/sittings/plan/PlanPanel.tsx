@@ -93,7 +93,7 @@ function Changes({ plan, actions, act, busy }: { plan: Plan; actions: PlanAction
 export function PlanPanel({ plan, actions }: { plan: Plan; actions: PlanActions }) {
   const { act, busy, said } = useAct();
   return (
-    <section className="section section--cap" aria-labelledby="ready-head">
+    <section className="section--cap" aria-labelledby="ready-head">
       <h2 id="ready-head">Ready and missing</h2>
       <ReadyLines lines={plan.readiness} />
       {plan.papers === 'drawing' && <div className="mt-4"><PapersProgress key={plan.candidates} sittingId={plan.id} drawn={plan.drawn} of={plan.candidates} /></div>}
