@@ -14,7 +14,7 @@ export function PasswordField({ label, error, help, tall, ...input }: Props) {
   return (
     <div className="field">
       <div className="flex items-baseline justify-between">
-        <label htmlFor={id}>{label}</label>
+        <label htmlFor={id} className="text-15 font-medium">{label}</label>
         <button type="button" className="-my-1 cursor-pointer py-1 text-15 text-enamel underline underline-offset-4" aria-pressed={shown} aria-label={`Show ${label.toLowerCase()}`} onClick={() => setShown(!shown)}>
           {shown ? 'Hide' : 'Show'}
         </button>

@@ -21,7 +21,7 @@ export function ParticularsFields<Fields extends FieldValues & { name: string; s
   return (
     <>
       <TextInput label="Name" help="As the person writes it. One word is enough." autoComplete="off" {...field('name')} />
-      <TextInput label="Sorted as" optional help="Made from the name when left empty: everything after the first word comes first." autoComplete="off" {...field('sortName')} />
+      <TextInput label="Sorted as" optional help="Made from the name when left empty: the last word comes first." autoComplete="off" {...field('sortName')} />
       <TextInput label="Learner number" optional autoComplete="off" {...field('learnerNumber')} />
       <TextInput label="E-mail" optional help="For invitations, reports and a forgotten password. Without one, print slips." type="email" autoComplete="off" {...field('email')} />
     </>

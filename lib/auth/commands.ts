@@ -22,7 +22,7 @@ async function waitTurn(db: Database, tries: Tries): Promise<Result<null, 'slowe
   for (let turn = 1; ; turn++) {
     const wait = await beginTry(db, tries);
     if (wait === 0) return done(null);
-    if (wait > patienceSeconds || turn === patienceTries) return refuse('slowed', slowed(wait));
+    if (wait > patienceSeconds || turn === patienceTries) return refuse('slowed', slowed(Math.ceil(wait)));
     await new Promise((resolve) => setTimeout(resolve, wait * 1000));
   }
 }

@@ -19,7 +19,7 @@ export function triesAt(kind: 'sign-in' | 'slip' | 'reset', subject: string, add
 
 /**
  * Counts a try as failed before it is looked at, so that tries at the same time cannot slip by; `forgive` takes it back.
- * Returns 0 when it may go on, else the whole seconds to wait (then nothing was counted).
+ * Returns 0 when it may go on, else the seconds to wait (then nothing was counted).
  */
 export async function beginTry(db: Database, tries: Tries): Promise<number> {
   const keys = tries.watches.map((watch) => watch.key).sort();
@@ -39,7 +39,7 @@ export async function beginTry(db: Database, tries: Tries): Promise<number> {
       .forUpdate()
       .execute();
     const wait = Math.max(0, ...rows.map((row) => row.wait));
-    if (wait > 0) return Math.ceil(wait);
+    if (wait > 0) return wait;
     for (const row of rows) {
       const watch = tries.watches.find((one) => one.key === row.key);
       if (!watch) throw new Error(`No watch has the key ${row.key}.`);

@@ -38,11 +38,12 @@ export type PersonInput = z.infer<typeof personSchema>;
 
 export const rolesSchema = z.object({ roles: rolesField });
 
-/** "Anneke van der Berg" → "van der Berg, Anneke"; one word stays as it is. What follows the given name counts as the family name. */
+/** "Anneke van der Berg" → "van der Berg, Anneke": the last word with the small words before it comes first; one word stays as it is. */
 export function sortNameOf(name: string): string {
   const words = tidy(name).split(' ');
-  const [given, ...family] = words;
-  return given === undefined || family.length === 0 ? words.join(' ') : `${family.join(' ')}, ${given}`;
+  let first = words.length - 1;
+  while (first > 1 && /^\p{Ll}/u.test(words[first - 1] ?? '')) first--;
+  return first < 1 ? words.join(' ') : `${words.slice(first).join(' ')}, ${words.slice(0, first).join(' ')}`;
 }
 
 /** What is stored: tidied, addresses in small letters, nothing as null. */

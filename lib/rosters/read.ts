@@ -4,6 +4,13 @@ import { type ColumnKey, type RawRoster, type RawRow, rosterColumns, rosterLimit
 
 type Text = { text: string; encoding: RawRoster['encoding'] };
 
+// 0x80–0x9f of Windows-1252 (unicode.org, MAPPINGS/VENDORS/MICSFT/WINDOWS/CP1252.TXT); the rest is Latin 1. Node's own decoder of that
+// name leaves these as control characters (v20).
+const windows = '€\u0081‚ƒ„…†‡ˆ‰Š‹Œ\u008dŽ\u008f\u0090‘’“”•–—˜™š›œ\u009džŸ';
+
+const decodeWindows = (bytes: Uint8Array): string =>
+  new TextDecoder('latin1').decode(bytes).replace(/[\x80-\x9f]/g, (sign) => windows[sign.charCodeAt(0) - 0x80] ?? sign);
+
 /** UTF-8 with or without mark, UTF-16 with a mark, and what is no UTF-8 is Windows-1252, which office programs still write. */
 export function decodeText(bytes: Uint8Array): Text {
   if ((bytes[0] === 0xff && bytes[1] === 0xfe) || (bytes[0] === 0xfe && bytes[1] === 0xff))
@@ -11,7 +18,7 @@ export function decodeText(bytes: Uint8Array): Text {
   try {
     return { text: new TextDecoder('utf-8', { fatal: true }).decode(bytes), encoding: 'UTF-8' };
   } catch {
-    return { text: new TextDecoder('windows-1252').decode(bytes), encoding: 'Windows-1252' };
+    return { text: decodeWindows(bytes), encoding: 'Windows-1252' };
   }
 }
 
