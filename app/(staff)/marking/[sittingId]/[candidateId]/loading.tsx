@@ -1,0 +1,5 @@
+import { SheetSkeleton } from '@/components/ui/Skeleton';
+
+export default function Loading() {
+  return <SheetSkeleton />;
+}
