@@ -1,24 +1,6 @@
-import { existsSync } from 'node:fs';
-import path from 'node:path';
-import { pathToFileURL } from 'node:url';
 import { sql } from 'kysely';
-import { closeDatabases, type Database, openDatabase } from '@/db/client';
-import { root } from './embedded';
+import { closeDatabases, openDatabase } from '@/db/client';
 import { prepareDatabase } from './prepare';
-
-export type DemoAccount = { role: string; name: string; signIn: string; password: string };
-type DemoModule = {
-  /** Fills the database through real commands; `say` gets a line for each step. */
-  loadDemo(db: Database, say: (line: string) => void): Promise<void>;
-  demoAccounts: readonly DemoAccount[];
-};
-
-async function demoModule(): Promise<DemoModule | undefined> {
-  const file = path.join(root, 'lib/demo/load.ts');
-  return existsSync(file) ? ((await import(pathToFileURL(file).href)) as DemoModule) : undefined;
-}
-
-export const demoAccounts = async (): Promise<readonly DemoAccount[]> => (await demoModule())?.demoAccounts ?? [];
 
 const addressOf = (url: string, database: string): string => Object.assign(new URL(url), { pathname: `/${database}` }).href;
 
@@ -37,13 +19,13 @@ async function fill(url: string, say: (line: string) => void): Promise<void> {
   const owner = openDatabase(url, undefined, { max: 1 });
   await sql`update app.installation set kind = 'demo'`.execute(owner);
   await owner.destroy();
-  const demo = await demoModule();
-  if (!demo) return;
+  // The engine behind it is large, and a start with data does not need it.
+  const { loadDemo } = await import('@/lib/demo/load');
   const before = process.env.DATABASE_URL;
   process.env.DATABASE_URL = url;
   const db = openDatabase(url, 'fullfield_app');
   try {
-    await demo.loadDemo(db, say);
+    await loadDemo(db, say);
   } finally {
     await db.destroy();
     await closeDatabases();

@@ -1,7 +1,7 @@
 import net from 'node:net';
 import path from 'node:path';
+import { demoAccounts } from '@/lib/demo/accounts';
 import type { StartSettings } from './checks';
-import { demoAccounts } from './demo';
 import { dataDirectory, root } from './embedded';
 import { takeFolder } from './running';
 import { type Ending, type Mode, serve } from './serve';
@@ -27,13 +27,13 @@ async function stopAll(endings: Ending[]): Promise<void> {
 }
 
 /** The one block: where it is, who can sign in, where mail can be read, how to stop. */
-async function printBlock(settings: StartSettings, dataDir: string, local: string): Promise<void> {
-  const row = (label: string, text: string) => say(`  ${label.padEnd(12)}${text}`);
+function printBlock(settings: StartSettings, dataDir: string, local: string): void {
+  const row = (label: string, text: string) => say(`  ${label.padEnd(24)}${text}`);
   say('');
   say('Fullfield');
   row('Address', settings.publicUrl);
   if (settings.kind === 'demo') {
-    for (const account of await demoAccounts()) row(account.role, `${account.signIn}  password ${account.password}  (${account.name})`);
+    for (const account of demoAccounts) row(account.role, `${account.signIn}  password ${account.password}  (${account.name})`);
   }
   if (settings.kind !== 'school' && !settings.smtpUrl) row('Mail', `${settings.publicUrl}/mail`);
   row('Data', `${path.relative(root, dataDir) || '.'} (logs in logs/)`);
@@ -68,7 +68,7 @@ export async function main(mode: Mode): Promise<void> {
     if (!(await portFree(host, port))) throw new Error(`Port ${port} is used by another program. Choose another: PORT=${port + 1} npm start`);
     const distDir = process.env.NEXT_DIST_DIR || '.next';
     const settings = await serve({ mode, dataDir, host, port, distDir }, endings, () => stopping !== undefined, () => void end(1));
-    if (!stopping) await printBlock(settings, dataDir, local);
+    if (!stopping) printBlock(settings, dataDir, local);
   } catch (error) {
     if (!stopping) process.stderr.write(`${error instanceof Error ? error.message : String(error)}\n`);
     await end(1);

@@ -2,6 +2,7 @@ import { setTimeout as sleep } from 'node:timers/promises';
 import { sql } from 'kysely';
 import type { Database } from '@/db/client';
 import { sealEvents } from '@/lib/audit/commands';
+import { recordEnds } from '@/lib/sittings/commands';
 
 /** Something small that is done again and again, by one worker at a time. */
 export type Round = {
@@ -11,7 +12,10 @@ export type Round = {
   run(db: Database): Promise<unknown>;
 };
 
-export const rounds: readonly Round[] = [{ name: 'seal the log', every: 1, run: sealEvents }];
+export const rounds: readonly Round[] = [
+  { name: 'seal the log', every: 1, run: sealEvents },
+  { name: 'record the ends of papers', every: 2, run: (db) => recordEnds({ db, actor: { kind: 'system', name: 'worker' } }) },
+];
 
 /** Runs `round` once, unless another worker is at it: the lock is the database's and ends with this connection. */
 async function runOnce(db: Database, round: Round): Promise<void> {
