@@ -1,3 +1,4 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { parseTemplate } from '@/lib/templates/parse';
 import { fixedMotor, library, problemsOf, templateOf } from '../../support/templates';
@@ -75,6 +76,20 @@ describe('reading a template', () => {
   it('never throws on a text that is no template', () => {
     for (const text of ['', '- a', '42', 'a: [', '"', '\u0000', 'template: x', 'parts: 3', 'given: { a: 1 }\nparts: [1, null]', `${'['.repeat(3000)}`])
       expect(parseTemplate(text, library).ok).toBe(false);
+  });
+});
+
+describe('reading any text', () => {
+  it('gives a template or problems with their places, and never throws', () => {
+    const lines = fixedMotor.split('\n');
+    const bad = fc.constantFrom('', '- x', 'key: 1/0', '  unit: none', 'choose: []', '    key: part.a', '"', '{', 'limits: [1, 2]', 'marks: -1', 'range: [0, 1e9]\n    step: 1e-9', '\t', 'null', 'given: null', 'part: c');
+    fc.assert(fc.property(fc.nat(lines.length - 1), fc.nat(3), bad, fc.boolean(), (at, without, text, indented) => {
+      const changed = [...lines.slice(0, at), ...(indented ? [`${/^ */.exec(lines[at] ?? '')?.[0] ?? ''}${text}`] : [text]), ...lines.slice(at + without)].join('\n');
+      const parsed = parseTemplate(changed, library);
+      if (parsed.ok) return;
+      expect(parsed.problems.length).toBeGreaterThan(0);
+      for (const { line = 1, column = 1 } of parsed.problems) expect(line >= 1 && column >= 1 && line <= changed.split('\n').length + 1).toBe(true);
+    }), { numRuns: 400 });
   });
 });
 
