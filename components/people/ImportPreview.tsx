@@ -9,10 +9,9 @@ import type { LedgerColumn } from '@/components/ui/ledger/model';
 import { Notice } from '@/components/ui/Notice';
 import { Sign } from '@/components/ui/Sign';
 import type { Result } from '@/lib/result';
-import type { RosterPreview, RosterProblem } from '@/lib/rosters/model';
+import type { RosterPreview, RosterProblem, RosterTaken } from '@/lib/rosters/model';
 
-type Taken = { people: number; added: number; changed: number; enrolled: number; invited: number };
-type Props = { preview: RosterPreview; take: () => Promise<Result<Taken>>; drop: () => Promise<Result<null>> };
+type Props = { preview: RosterPreview; take: () => Promise<Result<RosterTaken>>; drop: () => Promise<Result<null>> };
 
 const problemColumns: LedgerColumn[] = [
   { key: 'line', title: 'Line', figures: 0 },
@@ -65,25 +64,16 @@ export function ImportPreview({ preview, take, drop }: Props) {
   const [ask, question] = useConfirm();
   const [busy, start] = useTransition();
   const [refused, setRefused] = useState<string | null>(null);
-  const [taken, setTaken] = useState<Taken | null>(null);
   const { rows, problems, newClasses } = preview;
   const takeIn = async () => {
     const says = `${rows.length} rows are taken in at once${preview.invite ? ', and new people with an e-mail are sent invitations' : ''}. Nothing is taken away from anybody.`;
     if (!(await ask({ title: `Take in ${preview.fileName}?`, says, verb: 'Take it in', look: 'main' }))) return;
     start(async () => {
       const result = await take().catch(() => null);
-      if (result?.ok) setTaken(result.value);
-      else setRefused(result?.says ?? 'The server did not answer. Look under People whether it was taken in before you try again.');
+      // What was done is on the page itself, read anew.
+      if (!result?.ok) setRefused(result?.says ?? 'The server did not answer. Look under People whether it was taken in before you try again.');
     });
   };
-  if (taken)
-    return (
-      <Notice kind="ok" live title="The roster is taken in." action={<Button look="quiet" onClick={() => router.push('/people')}>Go to people</Button>}>
-        <p>
-          {taken.people} people: {taken.added} new, {taken.changed} changed; {taken.enrolled} enrolments, {taken.invited} invitations.
-        </p>
-      </Notice>
-    );
   return (
     <div className="grid gap-6">
       {problems.length > 0 ? (

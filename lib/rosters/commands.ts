@@ -9,6 +9,7 @@ import { insertAccount, voidSlips } from '@/lib/people/commands';
 import { mayManagePeople } from '@/lib/people/policy';
 import { done, notFound, refuse, type Result } from '@/lib/result';
 import { today } from '@/lib/school/today';
+import type { RosterTaken } from './model';
 import { planRoster, type Step } from './plan';
 import { readSurroundings, type StoredRoster } from './queries';
 import { readRoster } from './read';
@@ -70,8 +71,6 @@ export async function dropRoster(context: Context, id: string): Promise<Result<n
     return done(null);
   });
 }
-
-export type RosterTaken = { people: number; added: number; changed: number; enrolled: number; invited: number };
 
 /**
  * Takes a previewed roster in: all of it or nothing. Planned anew under the lock of the accounts, so that what changed since the

@@ -45,6 +45,9 @@ export type RosterRow = {
 
 /** What a row would do, for the preview. `known`: the account it is recognised as. */
 export type PlannedRow = RosterRow & { known: { id: string; name: string } | null; changes: string[] };
+/** What taking a roster in did: how many people it named, and of these how many were new or changed. */
+export type RosterTaken = { people: number; added: number; changed: number; enrolled: number; invited: number };
+
 export type RosterPreview = {
   id: string;
   fileName: string;
@@ -57,4 +60,5 @@ export type RosterPreview = {
   term: { id: string; name: string };
   makeClasses: boolean;
   invite: boolean;
+  taken: RosterTaken | null;
 };

@@ -4,7 +4,7 @@ import { type Context, accountId, type Role } from '@/lib/context';
 import { isId } from '@/lib/ids';
 import { mayManagePeople } from '@/lib/people/policy';
 import { done, notFound, type Result } from '@/lib/result';
-import type { RawRoster, RosterPreview, RosterProblem, RosterRow } from './model';
+import type { RawRoster, RosterPreview, RosterProblem, RosterRow, RosterTaken } from './model';
 import { type KnownAccount, planRoster, type Surroundings } from './plan';
 
 /** What the table keeps of a file that was read. */
@@ -51,6 +51,12 @@ export async function readSurroundings(db: Kysely<DB>, rows: readonly RosterRow[
   return { accounts: await knownAccounts(db, rows, termId), classes, term, makeClasses };
 }
 
+/** What taking it in did, from the log: the rows themselves are gone. */
+async function countsOf(context: Context, id: string): Promise<RosterTaken | null> {
+  const row = await context.db.selectFrom('event').where('subject', '=', 'roster').where('subject_id', '=', id).where('kind', '=', 'roster.taken').select('data').executeTakeFirst();
+  return row ? (row.data as unknown as RosterTaken) : null;
+}
+
 const emptyTerm = { id: '', name: '' };
 
 /** A file that was read, as it would act on the school now. Only whoever read it, while a registrar, sees it. */
@@ -60,12 +66,12 @@ export async function readPreview(context: Context, id: string): Promise<Result<
   if (!row) return notFound();
   const state = row.state as RosterPreview['state'];
   const shell = { id, fileName: row.file_name, state };
-  if (state !== 'previewed') return done({ ...shell, encoding: 'UTF-8', unknown: [], rows: [], problems: [], newClasses: [], term: emptyTerm, makeClasses: false, invite: false });
+  if (state !== 'previewed') return done({ ...shell, taken: await countsOf(context, id), encoding: 'UTF-8', unknown: [], rows: [], problems: [], newClasses: [], term: emptyTerm, makeClasses: false, invite: false });
   const stored = row.rows as unknown as StoredRoster;
   const around = await readSurroundings(context.db, stored.rows, stored.termId, stored.makeClasses);
   if (!around) return notFound();
   const plan = planRoster(stored.rows, around);
   const problems = [...(row.problems as unknown as RosterProblem[]), ...plan.problems].sort((a, b) => a.line - b.line);
   const { encoding, unknown, makeClasses, invite } = stored;
-  return done({ ...shell, encoding, unknown, rows: plan.planned, problems, newClasses: plan.newClasses, term: around.term, makeClasses, invite });
+  return done({ ...shell, taken: null, encoding, unknown, rows: plan.planned, problems, newClasses: plan.newClasses, term: around.term, makeClasses, invite });
 }

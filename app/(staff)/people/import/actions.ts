@@ -3,7 +3,8 @@
 import { revalidatePath } from 'next/cache';
 import { actionContext } from '@/lib/auth/context';
 import { refuse, type Result } from '@/lib/result';
-import { dropRoster, previewRoster, type RosterTaken, takeRoster } from '@/lib/rosters/commands';
+import { dropRoster, previewRoster, takeRoster } from '@/lib/rosters/commands';
+import type { RosterTaken } from '@/lib/rosters/model';
 
 export async function preview(form: FormData): Promise<Result<{ id: string }>> {
   const context = await actionContext('registrar');
@@ -18,9 +19,8 @@ export async function preview(form: FormData): Promise<Result<{ id: string }>> {
 export async function takeIn(id: string): Promise<Result<RosterTaken>> {
   const context = await actionContext('registrar');
   if (!context.ok) return context;
-  // The page stays as it is and says what was done: only the others are read anew.
   const taken = await takeRoster(context.value, id);
-  if (taken.ok) for (const page of ['/people', '/people/classes', '/people/terms']) revalidatePath(page);
+  if (taken.ok) revalidatePath('/people', 'layout');
   return taken;
 }
 

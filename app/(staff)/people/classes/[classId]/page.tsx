@@ -31,9 +31,11 @@ export default async function ClassPage(props: Props) {
   const values = { termId: row.termId, name: row.name, title: row.title, instructorIds };
   return (
     <>
-      <PageHead title={`Class ${row.name}`} says={says} back={{ href: '/people/classes', label: 'Classes' }}>
-        <ClassForm label="Change the class" title={`Class ${row.name}`} fields={{ values, terms: choices, instructors: instructors.value, save: storeClass.bind(null, row.id) }} />
-      </PageHead>
+      <div className="print:hidden">
+        <PageHead title={`Class ${row.name}`} says={says} back={{ href: '/people/classes', label: 'Classes' }}>
+          <ClassForm label="Change the class" title={`Class ${row.name}`} fields={{ values, terms: choices, instructors: instructors.value, save: storeClass.bind(null, row.id) }} />
+        </PageHead>
+      </div>
       <MembersLedger school={school.name} className={row.name} members={members} makeSlips={slipsFor} takeOut={takeOutOf.bind(null, row.id)} />
       <section aria-labelledby="enrol" className="mt-12 grid gap-4 print:hidden">
         <h2 id="enrol" className="text-22">Enrol students</h2>
