@@ -24,8 +24,8 @@ function Outcomes({ outcomes }: { outcomes: readonly FileOutcome[] }) {
         <tr><th scope="col">File</th><th scope="col">Outcome</th><th scope="col">Why</th></tr>
       </thead>
       <tbody>
-        {outcomes.map(({ name, outcome, slug, says }) => (
-          <tr key={name}>
+        {outcomes.map(({ name, outcome, slug, says }, place) => (
+          <tr key={place}>
             <th scope="row">{slug && outcome !== 'refused' ? <Link href={`/bank/${slug}`}>{name}</Link> : name}</th>
             <td data-head="Outcome"><Sign shape={marks[outcome].shape} tone={marks[outcome].tone}>{marks[outcome].word}</Sign></td>
             <td data-head="Why">{says}</td>

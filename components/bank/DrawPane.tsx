@@ -71,8 +71,8 @@ function Wrong({ part }: { part: PartShown }) {
       {part.options.filter((option) => !option.right && option.says).map((option) => (
         <li key={option.option} className="border-b border-rule py-2 text-15">Part {part.part}, option {option.option}: {option.says}</li>
       ))}
-      {part.missteps.map((misstep) => (
-        <li key={misstep.says} className="flex flex-wrap justify-between gap-x-4 border-b border-rule py-2 text-15">
+      {part.missteps.map((misstep, place) => (
+        <li key={place} className="flex flex-wrap justify-between gap-x-4 border-b border-rule py-2 text-15">
           <span>Part {part.part}: {misstep.says}</span>
           <span className="text-ink-soft">
             <span className="font-mono text-ink"><Figures text={misstep.value} /></span> · {earnsInWords(misstep.earns)}

@@ -58,8 +58,8 @@ function Missteps({ missteps }: { missteps: readonly MisstepShare[] }) {
 function Examples({ examples }: { examples: readonly ExampleShown[] }) {
   return (
     <ul className="grid gap-2">
-      {examples.map(({ source, obtained, figures, reproduced }) => (
-        <li key={source} className="grid gap-1 text-15">
+      {examples.map(({ source, obtained, figures, reproduced }, place) => (
+        <li key={place} className="grid gap-1 text-15">
           <Sign shape={reproduced ? 'check' : 'cross'} tone={reproduced ? 'ok' : 'stop'}>{figures} {reproduced ? 'reproduced' : 'not reproduced'}</Sign>
           <span className="text-13 text-ink-soft">{source}{obtained === 'memory' && ' (from memory)'}</span>
         </li>

@@ -57,7 +57,7 @@ function Pane({ title, name, children, flush }: { title: string; name: string; c
   return (
     <section className="flex min-w-0 flex-col border border-rule bg-sheet xl:h-[calc(100dvh-11rem)] xl:min-h-[36rem]" aria-labelledby={`pane-${name}`}>
       <h2 id={`pane-${name}`} className="border-b border-rule px-4 py-3 font-cond text-13 font-medium uppercase tracking-wider text-ink-soft">{title}</h2>
-      <div className={`flex min-h-0 flex-1 flex-col ${flush ? '' : 'overflow-auto p-4'}`}>{children}</div>
+      {flush ? <div className="flex min-h-0 flex-1 flex-col">{children}</div> : <div className="min-h-0 flex-1 overflow-auto p-4" tabIndex={0} role="group" aria-labelledby={`pane-${name}`}>{children}</div>}
     </section>
   );
 }

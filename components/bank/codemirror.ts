@@ -43,7 +43,7 @@ export function openEditor(parent: HTMLElement, options: EditorOptions): EditorV
   const saving = keymap.of([{ key: 'Mod-s', preventDefault: true, run: () => (options.onSave(), true) }]);
   const extensions = [
     EditorView.cspNonce.of(nonce()),
-    EditorView.contentAttributes.of({ 'aria-label': options.label, 'aria-describedby': options.describedBy }),
+    EditorView.contentAttributes.of({ tabindex: '0', 'aria-label': options.label, 'aria-describedby': options.describedBy }),
     EditorState.readOnly.of(options.readOnly),
     EditorView.editable.of(!options.readOnly),
     EditorView.updateListener.of((update) => update.docChanged && options.onChange(update.state.doc.toString())),

@@ -83,6 +83,7 @@ function slugOfFile(file: TemplateFile, facts: TemplateFacts | null): string {
 }
 
 async function bringIn(context: Context, file: TemplateFile): Promise<FileOutcome> {
+  if (!/\.ya?ml$/i.test(file.name)) return { name: file.name, outcome: 'refused', says: 'This is no template file: its name does not end in .yaml.' };
   const text = templateText.safeParse(file.text.replace(/^\ufeff/, ''));
   if (!text.success) return { name: file.name, outcome: 'refused', says: text.error.issues[0]?.message ?? 'This file cannot be stored.' };
   const facts = await factsOf(text.data);

@@ -8,7 +8,7 @@ import type { Answers, Task } from './sandbox-tasks';
 // can be killed, has a memory limit and knows no secret; it stays warm for the next request.
 const mostAtOnce = 2;
 const heapMegabytes = 256;
-const startMilliseconds = 60_000;
+const startMilliseconds = 120_000;
 
 export type Limits = {
   /** Time without a sign of life after which the task is stopped [ms]. */
@@ -30,13 +30,19 @@ function start(): ChildProcess {
   const child = spawn(process.execPath, args, { cwd: process.cwd(), env: environment, stdio: ['ignore', 'ignore', 'inherit', 'ipc'] });
   child.on('error', () => undefined);
   child.once('exit', () => (pool().idle = pool().idle.filter((other) => other !== child)));
+  return child;
+}
+
+/** Once started it gives way to everything else: a sitting that runs comes first. */
+function yieldToOthers(child: ChildProcess): void {
   try {
     if (child.pid) setPriority(child.pid, 10);
   } catch {
     // It has ended already; the task will say so.
   }
-  return child;
 }
+
+const tooLong = (milliseconds: number): string => `Stopped after ${Math.round(milliseconds / 1_000)} s without an end: make the expressions, ranges or requirements simpler.`;
 
 async function takePlace(): Promise<void> {
   const { running } = pool();
@@ -72,15 +78,17 @@ function converse<Kind extends Task['kind']>(child: ChildProcess, task: Extract<
       } else child.kill('SIGKILL');
       resolve(result);
     };
-    const wait = (milliseconds: number) => {
+    const wait = (milliseconds: number, says = tooLong(milliseconds)) => {
       clearTimeout(timer);
-      timer = setTimeout(() => finish(refuse('stopped', `Stopped after ${Math.round(milliseconds / 1_000)} s without an end: make the expressions, ranges or requirements simpler.`), false), milliseconds);
+      timer = setTimeout(() => finish(refuse('stopped', says), false), milliseconds);
     };
     const abort = () => finish(refuse('cancelled', 'Cancelled.'), false);
     const ended = () => finish(refuse('broken', 'The reading process ended early, most likely for want of memory: make the text simpler.'), false);
     const read = (message: Message) => {
-      if (message.kind === 'ready') wait(limits.stall);
-      else if (message.kind === 'progress') {
+      if (message.kind === 'ready') {
+        if (fresh) yieldToOthers(child);
+        wait(limits.stall);
+      } else if (message.kind === 'progress') {
         wait(limits.stall);
         limits.onProgress?.(message.done);
       } else if (message.kind === 'answer') finish(done(message.value as Answers[Kind]), true);
@@ -89,7 +97,8 @@ function converse<Kind extends Task['kind']>(child: ChildProcess, task: Extract<
     if (limits.signal?.aborted) return abort();
     limits.signal?.addEventListener('abort', abort);
     child.on('message', read).on('exit', ended);
-    wait(fresh ? startMilliseconds : limits.stall);
+    if (fresh) wait(startMilliseconds, 'The server is too busy to read the text now: try again in a moment.');
+    else wait(limits.stall);
     child.send(task, (error) => error && ended());
   });
 }
