@@ -115,8 +115,8 @@ describe('a working text', () => {
   });
 
   it('comes from files: known again, changed, refused', async () => {
-    const files = [{ name: 'a.yaml', text: textOf(slug) }, { name: 'b.yaml', text: textOf(slug, 'V * 1 / R') }, { name: '…', text: 'nothing' }];
-    expect(valueOf(await bringInFiles(ivo, files)).map(({ outcome }) => outcome)).toEqual(['same', 'changed', 'refused']);
+    const files = [{ name: 'a.yaml', text: textOf(slug) }, { name: 'b.yaml', text: textOf(slug, 'V * 1 / R') }, { name: '….yaml', text: 'nothing' }, { name: 'notes.txt', text: textOf('notes') }];
+    expect(valueOf(await bringInFiles(ivo, files)).map(({ outcome }) => outcome)).toEqual(['same', 'changed', 'refused', 'refused']);
     await expect(newTemplate(mara, { title: 'Twin', slug, area: 'dc-motors', level: 1, caution: '' })).resolves.toMatchObject({ ok: false, code: 'slug-taken' });
     const fresh = valueOf(await newTemplate(mara, { title: 'Current: "first"', slug: `new-${made}`, area: 'dc-motors', level: 2, caution: 'live-test' }));
     expect(await pageOf(ivo, fresh.slug)).toMatchObject({ title: 'Current: "first"', area: 'dc-motors', level: 2, state: 'draft' });
@@ -243,7 +243,7 @@ describe('the bank', () => {
     for (const context of others) {
       const tries: Promise<Result<unknown>>[] = [
         ledgerRows(context), templatePage(context, slug), workingText(context, id), versionText(context, versionId), approvedVersions(context), readCheck(context, checkId),
-        newTemplate(context, { title: 'T', slug: 't', area: 'dc-motors', level: 1, caution: '' }), saveDraft(context, { id, text: 'x', revision: 1 }), bringInFiles(context, [{ name: 'x', text: textOf(slug) }]),
+        newTemplate(context, { title: 'T', slug: 't', area: 'dc-motors', level: 1, caution: '' }), saveDraft(context, { id, text: 'x', revision: 1 }), bringInFiles(context, [{ name: 'x.yaml', text: textOf(slug) }]),
         startCheck(context, { id, draws: 500 }), cancelCheck(context, { id: checkId }), askForReview(context, { id, revision: 1, note: '' }),
         decideReview(context, { versionId, verdict: 'approved', note: '' }), takeBack(context, { id }), retire(context, { id }),
       ];
