@@ -44,7 +44,7 @@ export function PaperPreview({ paper, locale }: { paper: PaperContent; locale: s
     return { number: index + 1, state: answered === 0 ? ('blank' as const) : answered === one.parts.length ? ('answered' as const) : ('in part' as const), says: answered > 0 && answered < one.parts.length ? `${answered} of ${one.parts.length}` : undefined };
   });
   return (
-    <div className="mx-auto grid max-w-sheet gap-6">
+    <div className="mx-auto grid max-w-sheet grid-cols-[minmax(0,1fr)] gap-6">
       <CoverPage paper={paper} />
       {question && (
         <div className="sheet">

@@ -17,11 +17,17 @@ export function SumsPanel({ sums, minutes, sections, problems }: Props) {
   return (
     <section aria-label="Sums">
       <RatingPlate label="What the exam adds up to" cells={cells} columns={2} dense />
-      <table className="ledger mt-4">
-        <thead><tr><th scope="col">Section</th><th scope="col" className="n">Marks</th><th scope="col" className="n">Min</th></tr></thead>
-        <tbody>
+      <table className="ledger mt-4" role="table" aria-label="Marks and minutes by section">
+        <thead role="rowgroup">
+          <tr role="row"><th scope="col" role="columnheader">Section</th><th scope="col" role="columnheader" className="n">Marks</th><th scope="col" role="columnheader" className="n">Min</th></tr>
+        </thead>
+        <tbody role="rowgroup">
           {sums.sections.map((sum, index) => (
-            <tr key={index}><td>{sections[index] || `Section ${index + 1}`}</td><td className="n">{sum.marks}</td><td className="n">{sum.minutes}</td></tr>
+            <tr role="row" key={index}>
+              <th scope="row" role="rowheader">{sections[index] || `Section ${index + 1}`}</th>
+              <td role="cell" className="n" data-head="Marks">{sum.marks}</td>
+              <td role="cell" className="n" data-head="Min">{sum.minutes}</td>
+            </tr>
           ))}
         </tbody>
       </table>

@@ -33,19 +33,26 @@ type Props = {
   remove: (input: { sittingId: string; candidateId: string }) => Promise<Result<null>>;
 };
 
-function Row({ candidate, seat, mayPlan, onSeat, onRemove }: { candidate: CandidateLine; seat: string; mayPlan: boolean; onSeat: (seat: string) => void; onRemove: () => void }) {
+const heads = (mayPlan: boolean) => [
+  { title: 'Candidate', look: '' }, { title: 'Seat', look: '' }, { title: 'Need', look: '' }, { title: 'Time', look: 'n dbl' }, { title: 'Rest', look: 'n' },
+  { title: mayPlan ? 'Paper' : 'State', look: 'dbl' }, { title: 'Invitation', look: '' },
+];
+
+type RowProps = { candidate: CandidateLine; seat: string; mayPlan: boolean; onSeat: (seat: string) => void; onRemove: () => void };
+
+function Row({ candidate, seat, mayPlan, onSeat, onRemove }: RowProps) {
   return (
-    <tr>
-      <td><span className="name">{candidate.name}</span>{candidate.learnerNumber && <span className="sub">{candidate.learnerNumber}</span>}</td>
-      <td>
+    <tr role="row">
+      <th scope="row" role="rowheader"><span className="name">{candidate.name}</span>{candidate.learnerNumber && <span className="sub">{candidate.learnerNumber}</span>}</th>
+      <td role="cell" data-head="Seat">
         {mayPlan ? <input className="input input--sm input--mono w-20" aria-label={`Seat of ${candidate.name}`} value={seat} maxLength={12} autoComplete="off" onChange={(event) => onSeat(event.target.value)} /> : <span className="num">{candidate.seat || '–'}</span>}
       </td>
-      <td>{candidate.need ? <span className="need">{candidate.need}</span> : <span className="text-ink-soft">–</span>}</td>
-      <td className="n dbl">{candidate.time}</td>
-      <td className="n">{candidate.rest || '–'}</td>
-      <td className="dbl">{mayPlan ? <StateMark thing="papers" state={candidate.hasPaper ? 'drawn' : 'none'} small /> : <StateMark thing="candidate" state={candidate.state} small />}</td>
-      <td>{candidate.mail ? <StateMark thing="e-mail" state={candidate.mail} small /> : <span className="text-13 text-ink-soft">{candidate.hasEmail ? 'not invited' : 'no address: slip'}</span>}</td>
-      {mayPlan && <td><Button size="dense" look="quiet" aria-label={`Take ${candidate.name} off the list`} onClick={onRemove}>Take off</Button></td>}
+      <td role="cell" data-head="Need">{candidate.need ? <span className="need">{candidate.need}</span> : <span className="text-ink-soft">–</span>}</td>
+      <td role="cell" className="n dbl" data-head="Time">{candidate.time}</td>
+      <td role="cell" className="n" data-head="Rest">{candidate.rest || '–'}</td>
+      <td role="cell" className="dbl" data-head={mayPlan ? 'Paper' : 'State'}>{mayPlan ? <StateMark thing="papers" state={candidate.hasPaper ? 'drawn' : 'none'} small /> : <StateMark thing="candidate" state={candidate.state} small />}</td>
+      <td role="cell" data-head="Invitation">{candidate.mail ? <StateMark thing="e-mail" state={candidate.mail} small /> : <span className="text-13 text-ink-soft">{candidate.hasEmail ? 'not invited' : 'no address: slip'}</span>}</td>
+      {mayPlan && <td role="cell"><Button size="dense" look="quiet" aria-label={`Take ${candidate.name} off the list`} onClick={onRemove}>Take off</Button></td>}
     </tr>
   );
 }
@@ -70,19 +77,19 @@ export function CandidateList({ sittingId, candidates, mayPlan, saveSeats, remov
     <section aria-labelledby="candidates-head">
       <h2 id="candidates-head" className="mb-3 text-22">Candidates</h2>
       <FormGuard dirty={dirty && !busy} />
-      <div className="overflow-x-auto">
-        <table className="ledger">
-          <thead>
-            <tr>
-              <th scope="col">Candidate</th><th scope="col">Seat</th><th scope="col">Need</th><th scope="col" className="n dbl">Time</th><th scope="col" className="n">Rest</th>
-              <th scope="col" className="dbl">{mayPlan ? 'Paper' : 'State'}</th><th scope="col">Invitation</th>{mayPlan && <th scope="col"><span className="vh">Actions</span></th>}
+      <div className="ledger-scroll">
+        <table className="ledger" role="table" aria-labelledby="candidates-head">
+          <thead role="rowgroup">
+            <tr role="row">
+              {heads(mayPlan).map((head) => <th key={head.title} scope="col" role="columnheader" className={head.look}>{head.title}</th>)}
+              {mayPlan && <th scope="col" role="columnheader"><span className="vh">Actions</span></th>}
             </tr>
           </thead>
-          <tbody>
+          <tbody role="rowgroup">
             {candidates.map((candidate) => (
               <Row key={candidate.id} candidate={candidate} seat={seatOf(candidate)} mayPlan={mayPlan} onSeat={(seat) => setChanged(new Map(changed).set(candidate.id, seat))} onRemove={() => void takeOff(candidate)} />
             ))}
-            {candidates.length === 0 && <tr><td colSpan={mayPlan ? 8 : 7}>Nobody is on the list yet.</td></tr>}
+            {candidates.length === 0 && <tr role="row"><td role="cell" colSpan={mayPlan ? 8 : 7}>Nobody is on the list yet.</td></tr>}
           </tbody>
         </table>
       </div>

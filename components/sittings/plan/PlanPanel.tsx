@@ -49,7 +49,7 @@ function ReadyLines({ lines }: { lines: readonly Readiness[] }) {
 const people = (count: number): string => (count === 1 ? '1 candidate' : `${count} candidates`);
 const invited = (value: { queued: number; before: number; withoutAddress: number }): string => {
   const rest = value.before > 0 ? ` ${people(value.before)} had this plan already.` : '';
-  return `${value.queued === 1 ? '1 invitation' : `${value.queued} invitations`} queued.${rest}${value.withoutAddress > 0 ? ` ${people(value.withoutAddress)} without an address: print slips for them.` : ''}`;
+  return `${value.queued === 1 ? '1 invitation' : `${value.queued} invitations`} queued.${rest}${value.withoutAddress > 0 ? ` ${people(value.withoutAddress)} without an address: a registrar or proctor prints slips for them.` : ''}`;
 };
 
 function CancelDialog({ plan, cancel }: { plan: Plan; cancel: PlanActions['cancel'] }) {
