@@ -2,7 +2,7 @@ import { sql } from 'kysely';
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import { closeListener, subscribe } from '@/lib/live/listener';
 import { postChangeIn, postSaved, savesTopic, sittingTopic } from '@/lib/live/post';
-import { eventStream, type StreamEvent } from '@/lib/live/stream';
+import { closeStreams, eventStream, type StreamEvent } from '@/lib/live/stream';
 import { openTestDatabase, type TestDatabase } from '@/tests/support/database';
 import { until } from '@/tests/support/wait';
 
@@ -86,5 +86,15 @@ describe('posts about saved answers', () => {
     expect(wakes).toBeGreaterThan(0);
     expect(wakes).toBeLessThanOrEqual(Math.ceil(seconds * 4) + 2);
     end();
+  });
+});
+
+describe('a server that stops', () => {
+  it('ends its streams at once and opens none', async () => {
+    const { heard } = open(async () => []);
+    await until(async () => heard.text.startsWith('retry:'));
+    closeStreams();
+    await until(async () => heard.ended, 1);
+    expect(eventStream(new Request('http://127.0.0.1/'), { topics: [], read: async () => [] }).status).toBe(503);
   });
 });
