@@ -36,7 +36,7 @@ export function postSaved(sittingId: string): void {
     pending.last = performance.now();
     void notify(topic);
     setTimeout(() => {
-      if (!pending.timer && posts.get(topic) === pending) posts.delete(topic);
+      if (!pending.timer && performance.now() - pending.last >= gap) posts.delete(topic);
     }, gap).unref();
   }, wait);
 }

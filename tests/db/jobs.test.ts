@@ -39,12 +39,12 @@ describe('the queue', () => {
 
   it('is worked by two workers, each message once', async () => {
     workers.push(await startWorker({ url: database.url }), await startWorker({ url: database.url }));
-    await until(async () => (await livingWorkers(database.app)) === 2);
+    await until(async () => (await livingWorkers(database.app)) === 2, 60);
     const to = Array.from({ length: 20 }, (_, n) => `apprentice${n}@example.org`);
     for (const address of to) await queueMail(database.app, { kind: 'sitting', to: address, subject: 'Sitting', body: 'Thursday.' });
-    await until(async () => (await waiting()) === 0);
+    await until(async () => (await waiting()) === 0, 60);
     expect(sink.received.map((mail) => mail.to).sort()).toEqual([...to].sort());
-  });
+  }, 150_000);
 });
 
 describe('a worker that died', () => {
