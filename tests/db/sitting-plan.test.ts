@@ -34,7 +34,6 @@ let examId: string;
 let classId: string;
 
 beforeAll(async () => {
-  Object.assign(process.env, { PUBLIC_URL: 'http://127.0.0.1:1', NEXTAUTH_SECRET: 'x'.repeat(32), SEAT_KEY: 'y'.repeat(32) });
   database = await openTestDatabase();
   const { owner, app } = database;
   await database.setClock(new Date('2026-12-01T15:00:00Z'));
@@ -178,7 +177,7 @@ given:
   V: { label: Supply voltage, unit: V, choose: ${values} }
 stem: A resistance of 10 Ω is connected to a {{V}} supply.
 parts:
-  - { part: a, kind: number, ask: Find the current., key: V / 10, unit: A, marks: 3 }
+  - { part: a, kind: number, ask: Find the current., key: V / 10, unit: A, marks: 3, trade-constant: 10 ohm are stated in the stem }
 solution: $I = {{part.a}}$
 `;
     const version = await makeVersion(database.owner, ivo.id, { decider: mara.id, text: few('[100, 110, 120, 130, 140, 150]') });
@@ -186,7 +185,7 @@ solution: $I = {{part.a}}$
     const given: string[] = [];
     for (let round = 0; round < 2; round += 1) {
       const id = await planned({ formId: form.formId });
-      await draw(id);
+      expect(valueOf(await draw(id)).drawn).toBe(3);
       given.push(...(await drawsOf(id)).map((row) => `${row.account_id} ${keysOf(row.draw)}`));
     }
     expect(new Set(given).size).toBe(6);
@@ -275,7 +274,7 @@ describe('inviting', () => {
     expect(received).toHaveLength(3);
     const mail = await simpleParser(received[0]!.raw);
     expect(mail.text).toContain('Tuesday 8 December 2026, 09:00 Mountain Standard Time');
-    expect(mail.text).toContain('http://127.0.0.1:1/today');
+    expect(mail.text).toContain('https://exams.example.org/today');
     expect(mail.attachments[0]?.content.toString()).toMatch(/DTSTART:20261208T160000Z\r\nDTEND:20261208T180000Z/);
     expect((await page(id)).candidates.map((row) => row.mail)).toEqual(['accepted', 'accepted', 'accepted']);
     valueOf(await changeSitting(ivo, id, { title: 'Machines, period 2', room: '115', opensAt: '2026-12-08T08:30', startsAt: '2026-12-08T09:00', latestStartAt: '2026-12-08T09:30', proctors: [] }));
