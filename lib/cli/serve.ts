@@ -2,6 +2,7 @@ import path from 'node:path';
 import { setTimeout as sleep } from 'node:timers/promises';
 import { openDatabase } from '@/db/client';
 import { type Cluster, startCluster } from '@/db/cluster';
+import type { InstallationKind } from '@/lib/config';
 import { keepIn, startSink } from '@/lib/mail/sink';
 import { build, buildIsCurrent } from './build';
 import { refusals, type StartSettings, warnings } from './checks';
@@ -19,23 +20,28 @@ export type Ending = () => Promise<void>;
 
 const say = (line: string): void => void process.stdout.write(`${line}\n`);
 
-/** The database: the one of DATABASE_URL, or ours with the demo in it at the first run. Migrated. */
-async function openStore(plan: Plan, publicUrl: string, endings: Ending[], secrets: object): Promise<{ url: string; embedded: boolean }> {
+type Store = { url: string; embedded: boolean; kind: InstallationKind; /** Nobody is in it and the demo is to be loaded. */ firstRun: boolean };
+
+/** The database: the one of DATABASE_URL, or ours. Migrated. */
+async function openStore(plan: Plan, endings: Ending[]): Promise<Store> {
   const given = process.env.DATABASE_URL;
   if (given) {
     await prepareDatabase(given);
-    return { url: given, embedded: false };
+    return { url: given, embedded: false, kind: await installationKind(given), firstRun: false };
   }
   const cluster: Cluster = await startCluster({ dataDir: plan.dataDir, say });
   endings.push(() => cluster.stop());
   const applied = await prepareDatabase(cluster.url);
   if (applied.length > 0) say(`Database brought up to ${applied.at(-1)}`);
-  if (await isEmpty(cluster.url)) {
-    Object.assign(process.env, secrets, { PUBLIC_URL: publicUrl, FULLFIELD_KIND: 'demo', DATA_DIR: plan.dataDir });
-    await loadDemoInto(cluster.url, (line) => say(`Demo: ${line}`));
-  }
   endings.push(watchCluster(cluster, plan.dataDir, say));
-  return { url: cluster.url, embedded: true };
+  const firstRun = await isEmpty(cluster.url);
+  return { url: cluster.url, embedded: true, kind: firstRun ? 'demo' : await installationKind(cluster.url), firstRun };
+}
+
+async function loadDemoAtFirst(store: Store, settings: object): Promise<void> {
+  if (!store.firstRun) return;
+  Object.assign(process.env, settings);
+  await loadDemoInto(store.url, (line) => say(`Demo: ${line.trim()}`));
 }
 
 async function openSink(url: string, endings: Ending[]): Promise<string> {
@@ -89,13 +95,15 @@ async function buildWhenChanged(plan: Plan): Promise<void> {
 export async function serve(plan: Plan, endings: Ending[], stopped: () => boolean, giveUp: () => void): Promise<StartSettings> {
   const publicUrl = (process.env.PUBLIC_URL || `http://${plan.host === '0.0.0.0' ? '127.0.0.1' : plan.host}:${plan.port}`).replace(/\/+$/, '');
   const secrets = await readSecrets(plan.dataDir);
-  const [store] = await Promise.all([openStore(plan, publicUrl, endings, secrets), buildWhenChanged(plan)]);
-  const kind = await installationKind(store.url);
+  const store = await openStore(plan, endings);
+  const { kind } = store;
   const smtpUrl = process.env.SMTP_URL || undefined;
   const settings = { embedded: store.embedded, kind, databaseUrl: store.url, host: plan.host, publicUrl, smtpUrl, ...secrets };
   const why = refusals(settings);
   if (why.length > 0) throw new Error(`Not started:\n  ${why.join('\n  ')}`);
   for (const line of warnings(settings)) say(line);
+  const forDemo = { ...secrets, PUBLIC_URL: publicUrl, FULLFIELD_KIND: kind, DATA_DIR: plan.dataDir };
+  await Promise.all([loadDemoAtFirst(store, forDemo), buildWhenChanged(plan)]);
   const sinkUrl = smtpUrl ?? (kind === 'school' ? undefined : await openSink(store.url, endings));
   if (!stopped()) await startProcesses(plan, { ...settings, smtpUrl: sinkUrl, dataDir: plan.dataDir }, endings, giveUp);
   await waitUntilServed(`http://${plan.host === '0.0.0.0' ? '127.0.0.1' : plan.host}:${plan.port}`, stopped);
