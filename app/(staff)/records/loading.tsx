@@ -1,0 +1,5 @@
+import { LedgerSkeleton } from '@/components/ui/Skeleton';
+
+export default function Loading() {
+  return <LedgerSkeleton />;
+}
