@@ -44,7 +44,7 @@ function lineOf(row: LedgerRow, areas: Readonly<Record<string, string>>, moment:
     gone: row.state === 'retired',
     cells: {
       title: row.title,
-      area: areas[row.area] ?? row.area,
+      area: areas[row.area] ?? (row.area || 'not stated yet'),
       parts: kindsInWords(row.kinds),
       level: row.level,
       marks: row.marks,

@@ -104,7 +104,7 @@ function Drawn({ draw, locale }: { draw: DrawShown; locale: string }) {
       )}
       <section className="section--cap" aria-labelledby="solution-title">
         <h2 id="solution-title">Solution in these numbers</h2>
-        <div className="overflow-x-auto pt-3"><MathText html={draw.solutionHtml} /></div>
+        <div className="overflow-x-auto pt-3 [&_.katex-display]:overflow-visible" tabIndex={0} role="group" aria-labelledby="solution-title"><MathText html={draw.solutionHtml} /></div>
       </section>
     </div>
   );
