@@ -5,7 +5,8 @@ import { check, preview, read } from './sandbox-work';
 
 // Runs as a process of its own (sandbox.ts starts and ends it): tasks come and answers go as messages.
 let library: Library | undefined;
-const send = (message: unknown): void => void process.send?.(message);
+// A parent that went away while something was told is seen by 'disconnect'; the failed message says nothing more.
+const send = (message: unknown): void => void process.send?.(message, undefined, undefined, () => undefined);
 
 function perform(task: Task): Answers[Task['kind']] {
   library ??= loadLibrary();

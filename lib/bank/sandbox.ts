@@ -2,6 +2,7 @@ import { type ChildProcess, spawn } from 'node:child_process';
 import { setPriority } from 'node:os';
 import path from 'node:path';
 import { done, refuse, type Result } from '@/lib/result';
+import { processorTime } from './cpu-time';
 import type { Answers, Task } from './sandbox-tasks';
 
 // Text that somebody is typing may hold a formula that never ends. It is read and drawn in a process of its own, which
@@ -9,9 +10,11 @@ import type { Answers, Task } from './sandbox-tasks';
 const mostAtOnce = 2;
 const heapMegabytes = 256;
 const startMilliseconds = 120_000;
+/** How many times its limit of processor time a task may wait for a processor. */
+const mostWaiting = 12;
 
 export type Limits = {
-  /** Time without a sign of life after which the task is stopped [ms]. */
+  /** Processor time without a sign of life after which the task is stopped [ms]. */
   stall: number;
   onProgress?: (done: number) => void;
   signal?: AbortSignal;
@@ -80,7 +83,15 @@ function converse<Kind extends Task['kind']>(child: ChildProcess, task: Extract<
     };
     const wait = (milliseconds: number, says = tooLong(milliseconds)) => {
       clearTimeout(timer);
-      timer = setTimeout(() => finish(refuse('stopped', says), false), milliseconds);
+      const used = processorTime(child.pid);
+      const last = performance.now() + milliseconds * mostWaiting;
+      const look = () => {
+        const now = processorTime(child.pid);
+        // Starved by a busy machine, not running away: it may go on for a while.
+        if (used !== null && now !== null && now - used < milliseconds && performance.now() < last) timer = setTimeout(look, 1_000);
+        else finish(refuse('stopped', says), false);
+      };
+      timer = setTimeout(look, milliseconds);
     };
     const abort = () => finish(refuse('cancelled', 'Cancelled.'), false);
     const ended = () => finish(refuse('broken', 'The reading process ended early, most likely for want of memory: make the text simpler.'), false);
