@@ -1,5 +1,6 @@
 import PDFDocument from 'pdfkit';
-import { colour, type Face, faceNames, fontFile, instead, page } from './look';
+import { colour, type Face, faceNames, instead, page } from './look';
+import { fontOf } from './sfnt';
 
 export type Ink = { face?: Face; size?: number; colour?: string; align?: 'left' | 'right'; spacing?: number };
 type Element = PDFKit.PDFStructureElement;
@@ -20,10 +21,12 @@ export class Sheet {
 
   constructor(info: { title: string; author: string; at: Date; language: string }) {
     this.doc = new PDFDocument({
-      size: 'A4', margin: 0, bufferPages: true, pdfVersion: '1.7', tagged: true, lang: info.language, displayTitle: true, font: fontFile('sans'),
+      size: 'A4', margin: 0, bufferPages: true, pdfVersion: '1.7', tagged: true, lang: info.language, displayTitle: true,
+      // None of pdfkit's own: a standard font is neither embedded nor has it our letters.
+      font: '',
       info: { Title: info.title, Author: info.author, Producer: 'Fullfield', Creator: 'Fullfield', CreationDate: info.at, ModDate: info.at },
     });
-    for (const face of faceNames) this.doc.registerFont(face, fontFile(face));
+    for (const face of faceNames) this.doc.registerFont(face, fontOf(face));
     this.root = this.doc.struct('Document');
     this.doc.addStructure(this.root);
     this.doc.on('data', (chunk: Buffer) => this.#chunks.push(chunk));
