@@ -1,7 +1,7 @@
 import { mkdir } from 'node:fs/promises';
 import path from 'node:path';
 import { type Browser, chromium, type Page } from '@playwright/test';
-import { demoAccounts } from '@/lib/demo/load';
+import { demoAccounts } from '@/lib/demo/accounts';
 
 /**
  * `npm run screens`: pictures of the roles' main screens from a running demo (`FULLFIELD_URL`, else port 3000), for the README
