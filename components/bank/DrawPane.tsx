@@ -84,12 +84,15 @@ function Wrong({ part }: { part: PartShown }) {
   );
 }
 
+// The pane is narrower than the sheet that its viewport would have: the answer stands beneath its question here too.
+const narrow = '[&_.part]:grid-cols-[2rem_minmax(0,1fr)] [&_.part>:nth-child(3)]:col-start-2 [&_.part>:nth-child(3)]:mt-3';
+
 function Drawn({ draw, locale }: { draw: DrawShown; locale: string }) {
   const looking = { answerOf: () => '', stateOf: () => 'blank' as const };
   const wrong = draw.parts.some((part) => part.missteps.length > 0 || part.options.length > 0);
   return (
     <div className="grid grid-cols-[minmax(0,1fr)] gap-6">
-      <section aria-label="The question as a candidate sees it">
+      <section aria-label="The question as a candidate sees it" className={narrow}>
         <QuestionSheet question={draw.question} place={{ number: 1, of: 1 }} notation={notationOf(locale)} answering={looking} />
       </section>
       <section className="section--cap" aria-labelledby="keys-title">
