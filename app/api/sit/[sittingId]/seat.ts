@@ -23,7 +23,7 @@ export function seatCookie(seat: Seat): string {
   return `${cookieName}=${sealSeat(seat, config().seatKey)}; Path=/api/sit/${seat.sittingId}; HttpOnly; SameSite=Strict; Max-Age=86400${secure}`;
 }
 
-const statuses: Record<string, number> = { 'not-found': 404, 'other-device': 409, ended: 409, stopped: 409, 'wrong-state': 409, 'time-over': 409, unreadable: 400 };
+const statuses: Record<string, number> = { 'signed-out': 401, 'not-found': 404, 'other-device': 409, ended: 409, stopped: 409, 'wrong-state': 409, 'time-over': 409, unreadable: 400 };
 
 export const answer = (body: unknown, status = 200, headers: Record<string, string> = {}): Response =>
   Response.json(body, { status, headers: { 'cache-control': 'no-store', ...headers } });
