@@ -1,6 +1,7 @@
 import type { Metadata, Viewport } from 'next';
 import { cookies, headers } from 'next/headers';
 import type { ReactNode } from 'react';
+import { NonceMeta } from '@/components/shell/NonceMeta';
 import { readViewSettings, viewAttributes } from '@/components/shell/view-settings';
 import '@/fonts/plex-sans.css';
 import '@/fonts/plex-condensed.css';
@@ -20,12 +21,11 @@ export const viewport: Viewport = {
 };
 
 export default async function RootLayout({ children }: { children: ReactNode }) {
-  // Client code that makes style elements reads the nonce from the meta element: a prop is stale after a soft navigation.
   const nonce = (await headers()).get('x-nonce') ?? undefined;
   const view = viewAttributes(readViewSettings(await cookies()));
   return (
     <html lang="en" {...view} suppressHydrationWarning>
-      <head>{nonce && <meta property="csp-nonce" content={nonce} />}</head>
+      <head>{nonce && <NonceMeta nonce={nonce} />}</head>
       <body>
         <a className="skip btn btn--main" href="#main">
           Go to the page
