@@ -29,7 +29,7 @@ function rowOf(candidate: MarkedCandidate, sittingId: string): LedgerRow {
   return {
     id: candidate.id, gone: absent, href: `/marking/${sittingId}/${candidate.id}`,
     cells: {
-      name: candidate.name, number: candidate.learnerNumber,
+      name: candidate.name, number: { value: candidate.learnerNumber, show: <span className="num whitespace-nowrap text-13">{candidate.learnerNumber}</span> },
       total: result && !absent ? result.total : null, percent: result && !absent ? result.percent : null,
       outcome: result ? { value: result.withheld ? 'withheld' : result.outcome, show: <OutcomeMark outcome={result.outcome} withheld={result.withheld} small /> } : 'not marked',
       state: result ? { value: result.state, show: <ResultMark state={result.state} withheld={result.withheld} small /> } : null,

@@ -19,7 +19,7 @@ export const recordColumns = (page: Pick<RecordPage, 'sections'>, decimals: numb
   { key: 'outcome', title: 'Outcome', rule: true, choose: true },
   { key: 'state', title: 'Result', choose: true },
   { key: 'report', title: 'Report', rule: true },
-  { key: 'mail', title: 'E-mail', choose: true },
+  { key: 'mail', title: 'E-mail' },
 ];
 
 function mailCell({ report, hasEmail }: RecordLine, again: SendAgain | null): LedgerCell {
@@ -53,7 +53,7 @@ export function recordRow(line: RecordLine, sections: number, again: SendAgain |
   return {
     id: line.id, gone: result?.outcome === 'absent',
     cells: {
-      name: line.name, number: line.learnerNumber, ...figures,
+      name: line.name, number: { value: line.learnerNumber, show: <span className="num whitespace-nowrap text-13">{line.learnerNumber}</span> }, ...figures,
       total: sat ? result.total : null, percent: sat ? result.percent : null,
       outcome: result ? { value: result.withheld ? 'withheld' : result.outcome, show: <OutcomeMark outcome={result.outcome} withheld={result.withheld} small /> } : 'not marked',
       state: result ? { value: result.withheld ? 'withheld' : result.state, show: <ResultMark state={result.state} withheld={result.withheld} small /> } : null,
