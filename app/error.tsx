@@ -1,5 +1,6 @@
 'use client';
 
+import Link from 'next/link';
 import { useEffect, useRef } from 'react';
 import { Button } from '@/components/ui/Button';
 
@@ -20,9 +21,9 @@ export default function PageError({ error, reset }: { error: Error & { digest?: 
           <Button look="main" onClick={reset}>
             Try again
           </Button>
-          <a className="btn" href="/">
+          <Link className="btn" href="/">
             Go to the start
-          </a>
+          </Link>
         </div>
       </div>
     </main>

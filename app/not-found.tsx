@@ -1,4 +1,5 @@
 import type { Metadata } from 'next';
+import Link from 'next/link';
 
 export const metadata: Metadata = { title: 'Nothing here' };
 
@@ -10,9 +11,9 @@ export default function NotFound() {
         <h1>Nothing here</h1>
         <p className="mt-2">There is nothing at this address, or it is not yours to see. Check the address, or sign in with the account that may see it.</p>
         <div className="btn-row mt-6">
-          <a className="btn btn--main" href="/">
+          <Link className="btn btn--main" href="/">
             Go to the start
-          </a>
+          </Link>
         </div>
       </div>
     </main>

@@ -1,3 +1,4 @@
+import Link from 'next/link';
 import type { ReactNode } from 'react';
 import { Door } from '@/components/auth/Door';
 import { appDb } from '@/db/client';
@@ -27,8 +28,8 @@ export async function SchoolDoor({ children }: { children: ReactNode }) {
   const school = await readSchool(appDb());
   const links = (
     <>
-      <a href="/rehearse">Rehearse on a dummy paper</a>
-      {config().kind !== 'school' && <a href="/mail">Read the mail of this demo</a>}
+      <Link href="/rehearse">Rehearse on a dummy paper</Link>
+      {config().kind !== 'school' && <Link href="/mail">Read the mail of this demo</Link>}
     </>
   );
   return (

@@ -12,16 +12,14 @@ import { timeIn } from './use-clock';
 
 /** The exam room of one sitting. Everything it shows comes from the room's own store; it works on through a lost network. */
 export function ExamRoom({ sittingId }: { sittingId: string }) {
-  const [room, setRoom] = useState<Room | null>(null);
+  const [room] = useState(() => new Room(sittingId));
   useEffect(() => {
-    const made = new Room(sittingId);
-    setRoom(made);
-    void made.enter();
+    void room.enter();
     // A development build renames nothing when it changes: kept files would be stale.
     if (process.env.NODE_ENV === 'production') void keepShell().catch(() => undefined);
-    return () => made.leave();
-  }, [sittingId]);
-  return room ? <RoomPhases room={room} /> : <Entering />;
+    return () => room.leave();
+  }, [room]);
+  return <RoomPhases room={room} />;
 }
 
 const Entering = () => (

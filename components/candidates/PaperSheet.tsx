@@ -84,14 +84,13 @@ function RoomClock({ desk, view, part }: { desk: Desk; view: RoomView; part: 'ba
 /** Shown when the browser's count reaches the end before the server said so: nothing more is taken then. */
 function useOver(desk: Desk, view: RoomView): boolean {
   const end = view.state?.endsAt ?? null;
-  const [over, setOver] = useState(false);
+  const [reached, setReached] = useState<number | null>(null);
   useEffect(() => {
-    setOver(false);
     if (end === null) return;
-    const look = setInterval(() => setOver(desk.now() >= end), 500);
+    const look = setInterval(() => setReached(desk.now() >= end ? end : null), 500);
     return () => clearInterval(look);
   }, [desk, end]);
-  return over;
+  return end !== null && reached === end;
 }
 
 /** The paper while the clock runs: one question at a time, where each answer is, flag, formula sheet, hand in. */

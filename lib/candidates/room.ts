@@ -24,6 +24,7 @@ export type RoomView = {
 
 type Kept = { cover: RoomCover; state: RoomState; content: OpenedPaper['content'] | null; flags: number[]; wallOffset: number };
 
+const pause = (ms: number) => new Promise((resolve) => setTimeout(resolve, ms));
 const waits = 3_000;
 const polls = 5_000;
 
@@ -77,7 +78,11 @@ export class Room {
   /** Enters the room and follows it until `leave`. */
   async enter(): Promise<void> {
     const release = new Promise<void>((resolve) => { this.#leave = resolve; });
-    if (!(await holdRoom(this.sittingId, release))) return this.#show({ phase: 'other-window' });
+    this.#left = false;
+    // A window that was just reloaded may take a moment to let go.
+    const held = (await holdRoom(this.sittingId, release)) || (await pause(400), await holdRoom(this.sittingId, release));
+    if (this.#left) return;
+    if (!held) return this.#show({ phase: 'other-window' });
     addEventListener('online', this.#online);
     document.addEventListener('visibilitychange', this.#seen);
     await this.#recall();

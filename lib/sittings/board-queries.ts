@@ -10,7 +10,7 @@ import { done, notFound, type Result } from '@/lib/result';
 import { readSchool } from '@/lib/school/queries';
 import type { BoardSeat, BoardSnapshot, TimelineEntry } from './board-model';
 import type { SittingState } from './model';
-import { mayRunSitting, maySeeSitting } from './policy';
+import { mayRunSitting, maySeeSitting } from './relation';
 
 async function answeredByQuestion(db: Kysely<DB>, sittingId: string) {
   const { rows } = await sql<{ candidate_id: string; question: number; parts: number; last_at: Date }>`

@@ -7,7 +7,7 @@ import { addJob } from '@/lib/jobs/add';
 import { isId } from '@/lib/ids';
 import { done, notFound, type Result } from '@/lib/result';
 import type { SittingEvent, SittingState } from './model';
-import { mayRunSitting } from './policy';
+import { mayRunSitting } from './relation';
 import { nextSitting } from './rules';
 import { noteSitting } from './timeline';
 

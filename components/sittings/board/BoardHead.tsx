@@ -13,7 +13,11 @@ import type { Asking } from './ActionDialog';
 import { sittingAskings } from './askings';
 import { leftAt, signalOf } from './look';
 
-type HeadProps = { board: BoardSnapshot; now: number; live: boolean; time: (at: number) => string; ask: (asking: Asking) => void; run: (action: BoardAction) => void };
+type HeadProps = { board: BoardSnapshot; now: number; live: boolean | null; time: (at: number) => string; ask: (asking: Asking) => void; run: (action: BoardAction) => void };
+
+function dayInWords({ sitting }: BoardSnapshot): string {
+  return new Intl.DateTimeFormat(sitting.locale, { timeZone: sitting.zone, weekday: 'short', day: 'numeric', month: 'short' }).format(sitting.startsAt);
+}
 
 function whenInWords({ sitting }: BoardSnapshot, time: (at: number) => string): string {
   if (sitting.closedAt !== null) return `closed ${time(sitting.closedAt)}`;
@@ -57,11 +61,11 @@ export function BoardHead({ board, now, live, time, ask, run }: HeadProps) {
         <div>
           <Link className="page__back" href={`/sittings/${sitting.id}`}>Sitting</Link>
           <h1>{sitting.title}</h1>
-          <p>Room {sitting.room} · class {sitting.className} · {whenInWords(board, time)} · <StateMark thing="sitting" state={sitting.state} small /></p>
+          <p>Room {sitting.room} · class {sitting.className} · {dayInWords(board)}, {whenInWords(board, time)} · <StateMark thing="sitting" state={sitting.state} small /></p>
         </div>
         {board.mayRun && <Acts board={board} ask={ask} run={run} />}
       </div>
-      {!live && <Notice kind="wait" live>The live line to the server is down; the board asks every few seconds instead.</Notice>}
+      {live === false && <Notice kind="wait" live>The live line to the server is down; the board asks every few seconds instead.</Notice>}
       {board.mayRun && board.proctors.length < needed && (
         <Notice kind="wait">{board.proctors.length === 1 ? 'One proctor' : `${board.proctors.length} proctors`} for {board.seats.length} candidates; the school asks for one to {board.candidatesPerProctor}.</Notice>
       )}

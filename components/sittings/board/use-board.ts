@@ -9,10 +9,11 @@ import { boardKey, boardStream, fetchBoard } from '@/lib/sittings/client';
  * The board as it changes: the stream while it lives, asking each few seconds while it does not. `now` is the server's time,
  * going on between snapshots by the browser's monotonic clock.
  */
-export function useBoard(first: BoardSnapshot): { board: BoardSnapshot; now: number; live: boolean } {
+export function useBoard(first: BoardSnapshot): { board: BoardSnapshot; now: number; live: boolean | null } {
   const id = first.sitting.id;
   const client = useQueryClient();
-  const [live, setLive] = useState(false);
+  // Null until the stream opened or failed for the first time: nothing is wrong yet.
+  const [live, setLive] = useState<boolean | null>(null);
   const { data: board } = useQuery({
     queryKey: boardKey(id), queryFn: () => fetchBoard(id), initialData: first, staleTime: Infinity, refetchInterval: live ? false : 4_000,
   });
@@ -41,12 +42,11 @@ export function useBoard(first: BoardSnapshot): { board: BoardSnapshot; now: num
 }
 
 function useTimeSince(board: BoardSnapshot): number {
-  const [now, setNow] = useState(board.now);
+  const [told, setTold] = useState({ board, now: board.now });
   useEffect(() => {
     const since = performance.now();
-    setNow(board.now);
-    const tick = setInterval(() => setNow(board.now + performance.now() - since), 500);
+    const tick = setInterval(() => setTold({ board, now: board.now + performance.now() - since }), 500);
     return () => clearInterval(tick);
   }, [board]);
-  return now;
+  return told.board === board ? told.now : board.now;
 }
