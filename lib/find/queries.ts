@@ -1,6 +1,6 @@
 import { sql } from 'kysely';
 import { type Context, holds } from '@/lib/context';
-import { maySeeSitting } from '@/lib/sittings/policy';
+import { maySeeSitting } from '@/lib/sittings/relation';
 
 export type Hit = { href: string; title: string; kind: string };
 

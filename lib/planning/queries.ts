@@ -6,7 +6,7 @@ import { done, notFound, type Result } from '@/lib/result';
 import { readSchool } from '@/lib/school/queries';
 import { localDay } from '@/lib/school/times';
 import type { SittingState } from '@/lib/sittings/model';
-import { maySeeSitting, mayRunSitting } from '@/lib/sittings/policy';
+import { maySeeSitting, mayRunSitting } from '@/lib/sittings/relation';
 import type { PaperState } from './model';
 import { teachesClass } from './relation';
 import { allowancesOn, type Enrolled, enrolledOn } from './roster';
