@@ -1,3 +1,4 @@
+import { issueReports, sendReports } from '@/lib/reports/commands';
 import { moderateSitting, overrideMark, releaseResults, sealResults } from '@/lib/results/commands';
 import { markSitting } from '@/lib/results/marking';
 import type { Company } from './people';
@@ -29,5 +30,9 @@ export async function publish(stage: Stage, company: Company, sittingId: string)
   must(await moderateSitting(company.author, sittingId), 'moderating');
   must(await releaseResults(company.author, sittingId), 'releasing');
   must(await sealResults(company.registrar, sittingId), 'sealing');
-  stage.say('  marked, released and sealed');
+  const candidates = await stage.db.selectFrom('candidate').select('id').where('sitting_id', '=', sittingId).where('state', 'in', ['handed in', 'timed out']).orderBy('seat').limit(6).execute();
+  const candidateIds = candidates.map((candidate) => candidate.id);
+  must(await issueReports(company.registrar, { sittingId, candidateIds }), 'issuing grade reports');
+  must(await sendReports(company.registrar, { sittingId, candidateIds: candidateIds.slice(0, 3) }), 'sending grade reports');
+  stage.say('  marked, released and sealed; six grade reports issued');
 }
