@@ -15,7 +15,7 @@ export const recordColumns = (page: Pick<RecordPage, 'sections'>, decimals: numb
   { key: 'number', title: 'Number' },
   ...page.sections.map((section, at): LedgerColumn => ({ key: `section-${at}`, title: `${section.title} /${section.of}`, figures: decimals, ...(at === 0 ? { rule: true } : {}) })),
   { key: 'total', title: 'Total', figures: decimals, rule: true },
-  { key: 'percent', title: 'Percent', figures: decimals },
+  { key: 'percent', title: 'Percent', figures: decimals, hidden: true },
   { key: 'outcome', title: 'Outcome', rule: true, choose: true },
   { key: 'state', title: 'Result', choose: true },
   { key: 'report', title: 'Report', rule: true },
@@ -24,7 +24,7 @@ export const recordColumns = (page: Pick<RecordPage, 'sections'>, decimals: numb
 
 function mailCell({ report, hasEmail }: RecordLine, again: SendAgain | null): LedgerCell {
   if (!report) return null;
-  if (!report.mail) return { value: hasEmail ? 'not sent' : 'no address', show: <span className="text-13 text-ink-soft">{hasEmail ? 'not sent' : 'no address'}</span> };
+  if (!report.mail) return { value: hasEmail ? 'not sent' : 'no address', show: <span className="whitespace-nowrap text-13 text-ink-soft">{hasEmail ? 'not sent' : 'no address'}</span> };
   const { id, state, says } = report.mail;
   const stuck = state === 'failed' || state === 'unsure';
   return {
@@ -42,7 +42,7 @@ function mailCell({ report, hasEmail }: RecordLine, again: SendAgain | null): Le
 function reportCell({ report }: RecordLine): LedgerCell {
   if (!report) return null;
   const value = report.current ? `issue ${report.issue}` : `issue ${report.issue}, superseded`;
-  return { value, show: <LinkButton size="dense" document href={`/api/reports/${report.id}`}>PDF, {value}</LinkButton> };
+  return { value, show: <LinkButton size="dense" className="whitespace-nowrap" document href={`/api/reports/${report.id}`}>PDF, {value}</LinkButton> };
 }
 
 /** One candidate's line. What was not sat has no figures, never zeros. */
