@@ -31,7 +31,7 @@ export type Words = { answer: string; rule: boolean };
 /** One part as it was marked: what was asked and answered, the key, the verdict with its reason, and the marks. */
 export function MarkedPart({ part, mark, words, children }: { part: QuestionPart; mark: PartMark | undefined; words: Words; children?: ReactNode }) {
   return (
-    <section className="part part--stacked" aria-label={`Part ${part.part}`}>
+    <section className="part part--stacked" aria-label={mark ? `Question ${mark.question} part ${part.part}` : `Part ${part.part}`}>
       <span className="part__l" aria-hidden="true">{part.part}</span>
       <div className="part__ask"><MathText html={part.askHtml} inline /></div>
       <div className="min-w-0">

@@ -40,7 +40,7 @@ export function OwnPaper({ paper, sat, print, sentence }: Props) {
           <MarkedQuestion key={marked.number} marked={marked} words={{ answer: 'Your answer', rule: false }}>
             <section className="section section--cap" aria-labelledby={`solution-${marked.number}`}>
               <h2 id={`solution-${marked.number}`}>Solution in your numbers</h2>
-              <div className="overflow-x-auto pt-3" role="region" aria-label="Solution" tabIndex={0}><MathText html={marked.solutionHtml} /></div>
+              <div className="overflow-x-auto pt-3" role="region" aria-label={`Solution of question ${marked.number}, scrolls sideways`} tabIndex={0}><MathText html={marked.solutionHtml} /></div>
             </section>
           </MarkedQuestion>
         ))}
