@@ -11,7 +11,7 @@ import { makeRunningRoom, seatCookieOf } from '../support/running-room';
 import { type Sent, startSteadyWriter, type SteadyWriter } from '../support/steady-writer';
 import { until } from '../support/wait';
 
-test.setTimeout(300_000);
+test.setTimeout(600_000);
 
 const kills = ['first', 'database', 'second', 'database', 'first', 'database', 'second', 'database', 'both', 'database'] as const;
 type App = Awaited<ReturnType<typeof startApp>>;

@@ -5,13 +5,15 @@ import type { Gate } from './table';
 
 /**
  * A server action: who gets in, and what it is sent about a thing. What is sent would be refused by the command itself or changes nothing that
- * another line needs, so that getting in shows as another answer than `not-found`. `closed`: how the door is shut, where it is not by `not-found`.
+ * another line needs, so that getting in shows as another answer than `not-found`. `closed`: how the door is shut, where it is not by `not-found`;
+ * `opens`: the one answer that shows getting in.
  */
-export type Action = Gate & { send(things: Things): unknown[] | FormData; closed?: string; redirects?: true };
+export type Action = Gate & { send(things: Things): unknown[] | FormData; closed?: string; opens?: string };
 
+/** Fields of an input form as the one argument after `before`, in the way React sends them. */
 const form = (fields: Record<string, string | Blob>, before: unknown[] = []): FormData => {
   const data = new FormData();
-  for (const [name, value] of Object.entries(fields)) data.set(`1_${name}`, value);
+  for (const [name, value] of Object.entries(fields)) data.set(`_1_${name}`, value);
   data.set('0', JSON.stringify([...before, '$K1']));
   return data;
 };
@@ -20,8 +22,8 @@ const stale = 999;
 const times = { room: '9', opensAt: '2031-01-01T08:00', startsAt: '2031-01-01T08:30', latestStartAt: '2031-01-01T09:00', proctors: [] };
 const plan = ({ formId, classId }: Things) => ({ formId, classId, title: secret, ...times });
 const content = emptyExam(schoolSettings.parse({}));
-const person = { name: `${secret} person`, sortName: '', email: 'not-an-address', learnerNumber: '' };
-const need = { extraPercent: 0, extraMinutes: 0, restMinutes: 0, largePrint: false, separateRoom: false, reason, since: '2026-01-01', until: '' };
+const person = { name: `${secret} person`, sortName: '', email: '', learnerNumber: 'MX-person' };
+const need = { extraPercent: 5, extraMinutes: 0, restMinutes: 0, largePrint: false, separateRoom: false, reason, since: '2026-01-01', until: '' };
 const mark = (things: Things) => ({ candidateId: things.resultId, question: 1, part: 'a', reason });
 
 const bank: Record<string, Action> = {
@@ -69,35 +71,36 @@ const marking: Record<string, Action> = {
 
 const records: Record<string, Action> = {
   sealAction: { own: 'R', foreign: 'R', send: ({ overId }) => [overId] },
-  issueReportsAction: { own: 'R', foreign: 'R', send: ({ overId, resultId }) => [overId, false, [resultId]] },
-  sendReportsAction: { own: 'R', foreign: 'R', send: ({ plannedId, candidateId }) => [plannedId, [candidateId]] },
+  issueReportsAction: { own: 'R', foreign: '', send: ({ madeOverId, madeResultId }) => [madeOverId, false, [madeResultId]] },
+  sendReportsAction: { own: 'R', foreign: '', send: ({ madeOverId, madeResultId }) => [madeOverId, [madeResultId]] },
   sendAgainAction: { own: '', foreign: '', send: ({ examId }) => [examId] },
 };
 
 const people: Record<string, Action> = {
-  addPerson: { own: 'R', send: () => [{ ...person, roles: ['student'] }] },
-  saveParticulars: { own: 'R', foreign: 'R', send: ({ accountId }) => [accountId, person] },
-  saveRoles: { own: 'R', foreign: 'R', send: ({ accountId }) => [accountId, []] },
-  sendLinkTo: { own: 'R', foreign: '', send: ({ accountId }) => [accountId] },
-  closePerson: { own: 'R', foreign: '', send: ({ accountId }) => [accountId] },
-  reopenPerson: { own: 'R', foreign: 'R', send: ({ accountId }) => [accountId] },
-  give: { own: 'R', foreign: 'R', send: ({ accountId }) => [accountId, need] },
+  addPerson: { own: 'R', opens: 'invalid', send: () => [{ ...person, email: 'not-an-address', roles: ['student'] }] },
+  saveParticulars: { own: 'R', foreign: '', send: ({ personId }) => [personId, { ...person, learnerNumber: `MX-${personId.slice(0, 8)}` }] },
+  saveRoles: { own: 'R', foreign: '', send: ({ personId }) => [personId, ['student']] },
+  sendLinkTo: { own: 'R', foreign: '', send: ({ personId }) => [personId] },
+  give: { own: 'R', foreign: '', send: ({ personId }) => [personId, need] },
   end: { own: 'R', foreign: '', send: ({ accommodationId }) => [accommodationId] },
+  closePerson: { own: 'R', foreign: '', send: ({ personId }) => [personId] },
+  reopenPerson: { own: 'R', foreign: '', send: ({ personId }) => [personId] },
 };
 
 const classes: Record<string, Action> = {
-  storeTerm: { own: 'R', foreign: 'R', send: ({ termId }) => [termId, { name: '', startsOn: '2026-01-01', endsOn: '2026-01-02' }] },
-  moveTerm: { own: 'R', foreign: 'R', send: ({ termId }) => [termId, 'open'] },
-  storeClass: { own: 'R', foreign: 'R', send: ({ classId, termId }) => [classId, { termId, name: '', title: '', instructorIds: [] }] },
-  enrolIn: { own: 'R', foreign: 'R', send: ({ classId }) => [classId, []] },
-  takeOutOf: { own: 'R', foreign: 'R', send: ({ classId }) => [classId, []] },
-  slipsFor: { own: 'R', send: () => [[]] },
+  storeTerm: { own: 'R', foreign: '', send: ({ madeTermId }) => [madeTermId, { name: `${secret} ${madeTermId.slice(0, 8)}`, startsOn: '2026-01-01', endsOn: '2099-12-31' }] },
+  moveTerm: { own: 'R', foreign: '', send: ({ madeTermId }) => [madeTermId, 'open'] },
+  // Its term is not there either, and is looked for first.
+  storeClass: { own: 'R', foreign: '', closed: 'invalid', send: ({ madeClassId, madeTermId }) => [madeClassId, { termId: madeTermId, name: `MX-${madeClassId.slice(0, 8)}`, title: '', instructorIds: [] }] },
+  enrolIn: { own: 'R', foreign: '', send: ({ madeClassId, personId }) => [madeClassId, [personId]] },
+  takeOutOf: { own: 'R', foreign: '', send: ({ madeClassId, accountId }) => [madeClassId, [accountId]] },
+  slipsFor: { own: 'R', send: ({ personId }) => [[personId]] },
 };
 
 const rosters: Record<string, Action> = {
-  preview: { own: 'R', send: ({ termId }) => form({ file: new Blob(['']), termId }) },
+  preview: { own: 'R', send: ({ madeTermId }) => form({ file: new Blob(['name,learner number\n']), termId: madeTermId }) },
   takeIn: { own: 'R', foreign: '', send: ({ importId }) => [importId] },
-  drop: { own: 'R', foreign: '', send: ({ importId }) => [importId] },
+  drop: { own: 'R', foreign: '', send: ({ droppedId }) => [droppedId] },
 };
 
 const others: Record<string, Action> = {
@@ -106,9 +109,9 @@ const others: Record<string, Action> = {
   'app/(room)/rehearse/actions.ts#finishRehearsal': { own: 'S s', send: () => [] },
   'app/account/actions.ts#changeOwnPassword': { own: 'S s I i P p R', send: () => [{ current: 'not this one', password: 'nor this one 99' }] },
   'app/(public)/actions.ts#askForReset': { own: 'N S s I i P p R', send: () => [{ identifier: 'nobody@matrix.test' }] },
-  'app/(public)/actions.ts#choosePassword': { own: 'N S s I i P p R', send: ({ token }) => ['reset', { token, password: 'nor this one 99' }] },
-  'app/account/actions.ts#signOutEverywhere': { own: 'N S s I i P p R', send: () => [], redirects: true },
-  'app/sign-out.ts#signOut': { own: 'N S s I i P p R', send: () => [], redirects: true },
+  'app/(public)/actions.ts#choosePassword': { own: 'N S s I i P p R', send: ({ examId }) => ['reset', { token: examId, password: 'nor this one 99' }] },
+  'app/account/actions.ts#signOutEverywhere': { own: 'N S s I i P p R', send: () => [], opens: 'elsewhere' },
+  'app/sign-out.ts#signOut': { own: 'N S s I i P p R', send: () => [], opens: 'elsewhere' },
 };
 
 const inFile = (file: string, rows: Record<string, Action>): [string, Action][] => Object.entries(rows).map(([name, action]) => [`${file}#${name}`, action]);

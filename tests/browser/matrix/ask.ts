@@ -69,7 +69,7 @@ export async function askAction(url: string, { id, page }: Known, sent: unknown[
     body: sent instanceof FormData ? sent : JSON.stringify(sent),
   });
   const body = await response.text();
-  if (response.status === 303) return { was: 'elsewhere', body };
+  if (response.status === 303 || response.headers.has('x-action-redirect')) return { was: 'elsewhere', body };
   const row = /^1:(\{.*\})$/m.exec(body)?.[1];
   const read = row === undefined ? undefined : answer.safeParse(JSON.parse(row));
   if (!read?.success) return { was: `no answer (${response.status})`, body };

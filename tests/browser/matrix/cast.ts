@@ -6,7 +6,7 @@ import { saveDraft, newTemplate } from '@/lib/bank/commands';
 import { admit } from '@/lib/candidates/commands';
 import { handIn, takeSeat } from '@/lib/candidates/seat-commands';
 import type { Seat } from '@/lib/candidates/seat-token';
-import { enrol, saveClass } from '@/lib/classes/commands';
+import { enrol, saveClass, saveTerm } from '@/lib/classes/commands';
 import type { Role } from '@/lib/context';
 import { staff } from '@/lib/demo/cast';
 import { asAccount } from '@/lib/demo/stage';
@@ -28,7 +28,9 @@ import type { Who } from './table';
 /** Things that an address or an action can name. All ids are of one set: own, somebody else's, or of nothing that exists. */
 export type Things = {
   sittingId: string; plannedId: string; overId: string; candidateId: string; resultId: string; classId: string; accountId: string; termId: string; formId: string;
-  accommodationId: string; templateId: string; slug: string; versionId: string; checkId: string; examId: string; importId: string; reportId: string; token: string; mailId: string;
+  accommodationId: string; templateId: string; slug: string; versionId: string; checkId: string; examId: string; importId: string; droppedId: string; reportId: string; token: string; mailId: string;
+  /** Things that a registrar may change although they are another's: made for the matrix alone, so that nothing of the demo changes. */
+  madeTermId: string; madeClassId: string; madeOverId: string; madeResultId: string; personId: string;
 };
 
 export type Cast = { db: Database; cookies: Record<Who, string>; own: Things; foreign: Things; missing: Things; seats: { own: Seat; foreign: Seat }; close(): Promise<void> };
@@ -117,7 +119,8 @@ async function demoThings(db: Database): Promise<{ things: Things; seat: Seat }>
 
 function noThings(): Things {
   const names = [
-    'sittingId', 'plannedId', 'overId', 'candidateId', 'resultId', 'classId', 'accountId', 'termId', 'formId', 'accommodationId', 'templateId', 'versionId', 'checkId', 'examId', 'importId', 'reportId',
+    'sittingId', 'plannedId', 'overId', 'candidateId', 'resultId', 'classId', 'accountId', 'termId', 'formId', 'accommodationId', 'templateId', 'versionId', 'checkId', 'examId', 'importId', 'droppedId',
+    'reportId', 'madeTermId', 'madeClassId', 'madeOverId', 'madeResultId', 'personId',
   ] as const;
   const ids = Object.fromEntries(names.map((name) => [name, randomUUID()])) as Record<(typeof names)[number], string>;
   return { ...ids, slug: 'no-such-template', token: 'no-such-token', mailId: '999999999' };
@@ -130,7 +133,8 @@ export async function makeCast(url: string, databaseUrl: string): Promise<Cast> 
   const { registrar, instructor, student } = people;
   const { settings } = await readSchool(db);
   const today = localDay(await readClock(db), settings);
-  const { id: termId } = await db.selectFrom('term').select('id').where('state', '=', 'open').executeTakeFirstOrThrow();
+  const { id: termId } = valueOf(await saveTerm(registrar.context, null, { name: `${secret} ${randomUUID().slice(0, 8)}`, startsOn: today, endsOn: '2099-12-31' }));
+  const bystander = await newPerson(registrar, ['student'], { name: `${secret} bystander`, email: `bystander-${randomUUID()}@matrix.test`, learnerNumber: `MX-${randomUUID().slice(0, 8)}` });
   const { id: formId } = await db.selectFrom('form').select('id').orderBy('approved_at').limit(1).executeTakeFirstOrThrow();
   const { id: classId } = valueOf(await saveClass(registrar.context, null, { termId, name: `MX-${randomUUID().slice(0, 8)}`, title: secret, instructorIds: [instructor.id] }));
   valueOf(await enrol(registrar.context, classId, [student.id]));
@@ -139,13 +143,14 @@ export async function makeCast(url: string, databaseUrl: string): Promise<Cast> 
   const { examId } = valueOf(await newExam(instructor.context, { title: `${secret} exam` }));
   const roster = { fileName: `${secret}.csv`, bytes: new TextEncoder().encode(`name,learner number\n${secret} Learner,MX-9\n`), termId, makeClasses: false, invite: false };
   const { id: importId } = valueOf(await previewRoster(registrar.context, roster));
+  const { id: droppedId } = valueOf(await previewRoster(registrar.context, roster));
   const stage = { db, people, formId, classId };
   const [plannedId, overId, sittingId] = [await schedule(stage, 'ahead'), await schedule(stage, 'over'), await schedule(stage, 'now')];
   const over = await finish(stage, overId);
   const { seat, candidateId } = await run(stage, sittingId);
   const own = {
     ...noThings(), ...(await bankThings(db, people)), sittingId, plannedId, overId, candidateId, resultId: over.resultId, reportId: over.reportId, classId, accountId: student.id, termId, formId,
-    accommodationId, examId, importId,
+    accommodationId, examId, importId, droppedId, madeTermId: termId, madeClassId: classId, madeOverId: overId, madeResultId: over.resultId, personId: bystander.id,
   };
   const demo = await demoThings(db);
   const cookies: Partial<Record<Who, string>> = { nobody: '' };
