@@ -2,11 +2,11 @@
 
 import { useState } from 'react';
 import { Button } from '@/components/ui/Button';
+import { timeIn } from '@/components/ui/clock-text';
 import { MathText } from '@/components/ui/MathText';
 import { Notice } from '@/components/ui/Notice';
 import { RatingPlate } from '@/components/ui/RatingPlate';
 import type { Room, RoomView } from '@/lib/candidates/room';
-import { timeIn } from './use-clock';
 
 const minutes = (seconds: number): string => `${Math.round(seconds / 60)} min`;
 
@@ -31,7 +31,7 @@ export function CoverSheet({ room, view }: { room: Room; view: RoomView }) {
     { label: 'Room', value: cover.room },
     { label: 'Seat', value: state.seat || 'any' },
     { label: 'Time for you', value: minutes(state.secondsAllowed) },
-    { label: 'Planned start', value: timeIn(cover.startsAt, cover.zone, cover.locale) },
+    { label: 'Planned start', value: timeIn(cover.startsAt, cover.zoneOffset) },
   ];
   return (
     <div className="room">
@@ -47,6 +47,7 @@ export function CoverSheet({ room, view }: { room: Room; view: RoomView }) {
             <Notice kind="ok" live title="You agreed to the declaration.">{' '}The paper opens by itself when the proctor starts the sitting.</Notice>
           ) : (
             <form
+              className="declaration"
               onSubmit={(event) => {
                 event.preventDefault();
                 void room.declare();

@@ -2,13 +2,13 @@
 
 import { useEffect, useState, useSyncExternalStore } from 'react';
 import { Button } from '@/components/ui/Button';
+import { timeIn } from '@/components/ui/clock-text';
 import { Notice } from '@/components/ui/Notice';
 import { keepShell } from '@/lib/candidates/offline-shell';
 import { Room, type RoomView } from '@/lib/candidates/room';
 import { CoverSheet } from './CoverSheet';
 import { PaperSheet } from './PaperSheet';
 import { RoomMessage } from './RoomMessage';
-import { timeIn } from './use-clock';
 
 /** The exam room of one sitting. Everything it shows comes from the room's own store; it works on through a lost network. */
 export function ExamRoom({ sittingId }: { sittingId: string }) {
@@ -32,7 +32,7 @@ const toToday = <a className="btn btn--lg" href="/today">Back to Today</a>;
 
 function Ended({ view, waiting }: { view: RoomView; waiting: number }) {
   const { state, cover } = view;
-  const at = state?.endedAt && cover ? timeIn(state.endedAt, cover.zone, cover.locale) : null;
+  const at = state?.endedAt && cover ? timeIn(state.endedAt, cover.zoneOffset) : null;
   const how = { 'handed in': 'Your paper is handed in', 'timed out': 'Your time is over', withdrawn: 'You were taken out of this sitting' }[state?.state as string] ?? 'This sitting is over for you';
   return (
     <RoomMessage title={how} cover={cover} action={toToday}>
@@ -71,7 +71,7 @@ function RoomPhases({ room }: { room: Room }) {
     case 'waiting':
       return (
         <RoomMessage title="Wait to be admitted" cover={cover} action={toToday}>
-          <p>{cover && `The sitting starts at ${timeIn(cover.startsAt, cover.zone, cover.locale)}. `}Show your photo identification to the proctor. This page goes on by itself.</p>
+          <p>{cover && `The sitting starts at ${timeIn(cover.startsAt, cover.zoneOffset)}. `}Show your photo identification to the proctor. This page goes on by itself.</p>
         </RoomMessage>
       );
     case 'cover': return <CoverSheet room={room} view={view} />;

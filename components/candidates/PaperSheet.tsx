@@ -5,6 +5,7 @@ import { RoomShell } from '@/components/shell/RoomShell';
 import { ViewSwitch } from '@/components/shell/ViewSwitch';
 import { Button } from '@/components/ui/Button';
 import { Clock } from '@/components/ui/Clock';
+import { timeIn } from '@/components/ui/clock-text';
 import { Dialog } from '@/components/ui/Dialog';
 import { MathText } from '@/components/ui/MathText';
 import { Notice } from '@/components/ui/Notice';
@@ -17,7 +18,7 @@ import { notationOf } from '@/lib/numeric/notation';
 import { HandIn } from './HandIn';
 import { QuestionSheet } from './QuestionSheet';
 import { stripOf } from './strip';
-import { timeIn, useServerNow } from './use-clock';
+import { useServerNow } from './use-clock';
 
 /** What a sheet works on: the room of a sitting, or a rehearsal that acts like one. */
 export type Desk = Pick<Room, 'now' | 'toggleFlag' | 'callHelp' | 'handIn'> & { outbox: { write(question: number, part: string, text: string): Promise<void> } };
@@ -77,7 +78,7 @@ function RoomClock({ desk, view, part }: { desk: Desk; view: RoomView; part: 'ba
   const [hidden, setHidden] = useState(false);
   const { seconds, end } = useTime(desk, view);
   if (part === 'bar') return <TimeBar seconds={seconds} allowed={view.state?.secondsAllowed ?? 0} />;
-  const says = view.cover ? `left · ends ${timeIn(end, view.cover.zone, view.cover.locale)}` : 'left';
+  const says = view.cover ? `left · ends ${timeIn(end, view.cover.zoneOffset)}` : 'left';
   return <Clock seconds={seconds} says={says} hidden={hidden} onHide={setHidden} />;
 }
 

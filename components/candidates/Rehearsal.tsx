@@ -10,7 +10,7 @@ import type { RoomView } from '@/lib/candidates/room';
 import { type Desk, PaperSheet } from './PaperSheet';
 import { RoomMessage } from './RoomMessage';
 
-type RehearsalProps = { name: string; now: number; place: { zone: string; locale: string }; done: () => Promise<unknown> };
+type RehearsalProps = { name: string; now: number; place: { zoneOffset: number; locale: string }; done: () => Promise<unknown> };
 
 const nowhere = { keepEntry: async () => undefined };
 

@@ -5,7 +5,7 @@ import { RatingPlate } from '@/components/ui/RatingPlate';
 import { StateMark } from '@/components/ui/StateMark';
 import type { OwnSitting } from '@/lib/candidates/model';
 import type { SchoolSettings } from '@/lib/school/model';
-import { showDay, showMoment, showTime, zoneName } from '@/lib/school/times';
+import { showDay, showMoment, showShortDay, showTime, zoneName } from '@/lib/school/times';
 
 type TodayProps = { now: Date; ahead: readonly OwnSitting[]; over: readonly OwnSitting[]; place: Pick<SchoolSettings, 'zone' | 'locale'> };
 
@@ -24,11 +24,12 @@ function NextToSit({ sitting, place }: { sitting: OwnSitting; place: TodayProps[
         {sitting.sittingState === 'check-in' ? <StateMark thing="sitting" state="check-in">check-in open</StateMark> : <StateMark thing="sitting" state={sitting.sittingState as 'planned'} />}
       </div>
       <h2>{sitting.title}</h2>
-      <p className="soft t15">{[`${sitting.minutesAllowed} minutes for you`, ...sitting.materials].join(', ')}</p>
+      <p className="soft t15">{[`${sitting.minutesAllowed} minutes for you`, ...sitting.materials.map((line) => line.charAt(0).toLowerCase() + line.slice(1))].join(' · ')}</p>
       <RatingPlate
-        kind="record" dense label="Sitting"
+        kind="record" dense columns={2} label="Sitting"
         cells={[
-          { label: 'Starts', value: `${showDay(sitting.startsAt, place)}, ${showTime(sitting.startsAt, place)}` },
+          { label: 'Day', value: showShortDay(sitting.startsAt, place) },
+          { label: 'Starts', value: showTime(sitting.startsAt, place) },
           { label: 'Room', value: sitting.room },
           { label: 'Seat', value: sitting.seat || 'any' },
         ]}

@@ -11,7 +11,3 @@ export function useServerNow(now: () => number): number {
   }, [now]);
   return shown;
 }
-
-/** A time of day in a zone, "11:25". */
-export const timeIn = (time: number, zone: string, locale: string): string =>
-  new Intl.DateTimeFormat(locale, { timeZone: zone, hour: '2-digit', minute: '2-digit', hour12: false }).format(time);

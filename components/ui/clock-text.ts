@@ -14,3 +14,6 @@ export function clockText(seconds: number): string {
 export function crossedMinutes(before: number, now: number): number | null {
   return announcedMinutes.find((minutes) => before > minutes * minute && now <= minutes * minute && now > (minutes - 1) * minute) ?? null;
 }
+
+/** A time of day, "11:25", in the zone that lies `zoneOffset` minutes east of UTC. */
+export const timeIn = (time: number, zoneOffset: number): string => new Date(time + zoneOffset * 60_000).toISOString().slice(11, 16);

@@ -81,7 +81,8 @@ export type RoomCover = {
   candidateName: string;
   minutes: number;
   startsAt: number;
-  zone: string;
+  /** The school's zone as the server has it [min east of UTC]: a browser's own table of zones may be older or newer. */
+  zoneOffset: number;
   locale: string;
   /** The cover page of the paper: instructions as HTML of ours, the declaration, what may lie on the bench, the pass rule. */
   instructionsHtml: string;

@@ -5,6 +5,7 @@ import { accountId, type Context } from '@/lib/context';
 import { isId } from '@/lib/ids';
 import { done, notFound, type Result } from '@/lib/result';
 import { readSchool } from '@/lib/school/queries';
+import { zoneOffset } from '@/lib/school/times';
 import type { CandidateState, RoomCover, RoomState } from './model';
 import type { Seat } from './seat-token';
 import { secondsLeftAt } from './rules';
@@ -80,7 +81,7 @@ export async function readOwnPlace(context: Context, sittingId: string): Promise
   const [now, school] = [await readClock(context.db), await readSchool(context.db)];
   const cover = {
     sittingId: row.sitting_id, title: row.title, room: row.room, candidateName: row.name, minutes: row.minutes,
-    startsAt: row.starts_at.getTime(), zone: school.settings.zone, locale: row.locale,
+    startsAt: row.starts_at.getTime(), zoneOffset: zoneOffset(now, school.settings), locale: row.locale,
     instructionsHtml: row.instructions ?? '', declaration: row.declaration ?? '', materials: row.materials ?? [], passRule: row.pass_rule ?? [],
   };
   return done({ cover, state: toRoomState(row, now, false) });

@@ -14,6 +14,10 @@ export const showTime = (time: Date, place: Place): string => at(time, place).to
 export const showSecond = (time: Date, place: Place): string => at(time, place).toFormat('HH:mm:ss');
 /** "Tuesday 1 December 2026, 14:20 Mountain Standard Time": an appointment, with the zone written out. */
 export const showAppointment = (time: Date, place: Place): string => `${at(time, place).toFormat('cccc d LLLL yyyy, HH:mm')} ${zoneName(time, place)}`;
+/** Minutes east of UTC at that time: what a browser is given, so that it needs no table of zones. */
+export const zoneOffset = (time: Date, place: Pick<Place, 'zone'>): number => DateTime.fromJSDate(time, { zone: place.zone }).offset;
+/** "Tue 1 Dec", for plates. */
+export const showShortDay = (time: Date, place: Place): string => at(time, place).toFormat('ccc d LLL');
 /** "Tuesday 1 December". */
 export const showDay = (time: Date, place: Place): string => at(time, place).toFormat('cccc d LLLL');
 /** "Mountain Standard Time". */

@@ -48,7 +48,8 @@ export type BoardSnapshot = {
     startedAt: number | null;
     pausedAt: number | null;
     closedAt: number | null;
-    zone: string;
+    /** The school's zone as the server has it [min east of UTC]: a browser's own table of zones may be older or newer. */
+    zoneOffset: number;
     locale: string;
   };
   proctors: string[];

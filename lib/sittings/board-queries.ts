@@ -8,6 +8,7 @@ import type { Context } from '@/lib/context';
 import { isId } from '@/lib/ids';
 import { done, notFound, type Result } from '@/lib/result';
 import { readSchool } from '@/lib/school/queries';
+import { zoneOffset } from '@/lib/school/times';
 import type { BoardSeat, BoardSnapshot, TimelineEntry } from './board-model';
 import type { SittingState } from './model';
 import { mayRunSitting, maySeeSitting } from './relation';
@@ -100,7 +101,7 @@ export async function readBoard(context: Context, sittingId: string): Promise<Re
       id: row.id, title: row.title, room: row.room, className: row.class_name, state: row.state as SittingState, papers: row.papers,
       opensAt: row.opens_at.getTime(), startsAt: row.starts_at.getTime(), latestStartAt: row.latest_start_at.getTime(), minutes: row.minutes,
       startedAt: row.started_at?.getTime() ?? null, pausedAt: row.paused_at?.getTime() ?? null, closedAt: row.closed_at?.getTime() ?? null,
-      zone: school.settings.zone, locale: row.locale,
+      zoneOffset: zoneOffset(now, school.settings), locale: row.locale,
     },
     proctors: proctors.map((proctor) => proctor.name),
     candidatesPerProctor: school.settings.candidatesPerProctor,

@@ -3,6 +3,7 @@ import { readClock } from '@/db/clock';
 import { Rehearsal } from '@/components/candidates/Rehearsal';
 import { pageContext } from '@/lib/auth/context';
 import { readSchool } from '@/lib/school/queries';
+import { zoneOffset } from '@/lib/school/times';
 import { finishRehearsal } from './actions';
 
 export const metadata: Metadata = { title: 'Rehearsal' };
@@ -11,6 +12,5 @@ export const metadata: Metadata = { title: 'Rehearsal' };
 export default async function RehearsePage() {
   const context = await pageContext('student');
   const [now, school] = await Promise.all([readClock(context.db), readSchool(context.db)]);
-  const { zone, locale } = school.settings;
-  return <Rehearsal name={context.actor.name} now={now.getTime()} place={{ zone, locale }} done={finishRehearsal} />;
+  return <Rehearsal name={context.actor.name} now={now.getTime()} place={{ zoneOffset: zoneOffset(now, school.settings), locale: school.settings.locale }} done={finishRehearsal} />;
 }

@@ -2,6 +2,7 @@
 
 import { useMemo, useState } from 'react';
 import { Button } from '@/components/ui/Button';
+import { timeIn } from '@/components/ui/clock-text';
 import { Notice } from '@/components/ui/Notice';
 import type { Result } from '@/lib/result';
 import type { BoardAction } from '@/lib/sittings/board-actions';
@@ -21,11 +22,8 @@ export function Board({ first, act }: { first: BoardSnapshot; act: (action: Boar
   const [selected, setSelected] = useState<string | null>(null);
   const [view, setView] = useState<'plan' | 'rows'>('plan');
   const [trouble, setTrouble] = useState<string | null>(null);
-  const { zone, locale } = board.sitting;
-  const time = useMemo(() => {
-    const format = new Intl.DateTimeFormat(locale, { timeZone: zone, hour: '2-digit', minute: '2-digit', hour12: false });
-    return (at: number) => format.format(at);
-  }, [zone, locale]);
+  const { zoneOffset } = board.sitting;
+  const time = useMemo(() => (at: number) => timeIn(at, zoneOffset), [zoneOffset]);
   const run = (action: BoardAction) => {
     setTrouble(null);
     void act(action).then((result) => (result.ok ? undefined : setTrouble(result.says)));

@@ -16,7 +16,8 @@ import { leftAt, signalOf } from './look';
 type HeadProps = { board: BoardSnapshot; now: number; live: boolean | null; time: (at: number) => string; ask: (asking: Asking) => void; run: (action: BoardAction) => void };
 
 function dayInWords({ sitting }: BoardSnapshot): string {
-  return new Intl.DateTimeFormat(sitting.locale, { timeZone: sitting.zone, weekday: 'short', day: 'numeric', month: 'short' }).format(sitting.startsAt);
+  // Formatted as UTC, moved by the offset the server gave, and in one locale: server and browser then write the same.
+  return new Intl.DateTimeFormat('en-GB', { timeZone: 'UTC', weekday: 'short', day: 'numeric', month: 'short' }).format(sitting.startsAt + sitting.zoneOffset * 60_000);
 }
 
 function whenInWords({ sitting }: BoardSnapshot, time: (at: number) => string): string {
