@@ -1,6 +1,7 @@
 'use client';
 
 import { useQuery } from '@tanstack/react-query';
+import { useEffect, useRef } from 'react';
 import { Button } from '@/components/ui/Button';
 import { clockText } from '@/components/ui/clock-text';
 import { Pairs, type Pair } from '@/components/ui/Pairs';
@@ -77,8 +78,11 @@ function CandidateTimeline({ board, seat, time }: Pick<PanelProps, 'board' | 'se
 export function CandidatePanel(props: PanelProps) {
   const { board, seat, now } = props;
   const signal = signalOf(seat, now);
+  const panel = useRef<HTMLElement>(null);
+  // On a tablet the panel lies beneath the seats.
+  useEffect(() => panel.current?.scrollIntoView({ block: 'nearest' }), [seat.candidateId]);
   return (
-    <aside className="sheet side" aria-label={`Candidate ${seat.name}`}>
+    <aside ref={panel} className="sheet side" aria-label={`Candidate ${seat.name}`}>
       <div className="side__top"><span className="mono soft">{seat.seat || 'no seat'}</span>{seat.need && <span className="need">{seat.need}</span>}</div>
       <h2>{seat.name}</h2>
       <div className="btn-row">
