@@ -1,5 +1,6 @@
 import { Kysely, PostgresDialect, type Transaction } from 'kysely';
 import pg from 'pg';
+import { preparing } from './prepared';
 import type { DB } from './types';
 
 /** A connection of ours; functions that lock rows ask for `Locked` instead, so that the type proves the transaction. */
@@ -56,7 +57,8 @@ export function openDatabase(url: string, role?: DatabaseRole, options: Database
   const pool = new pg.Pool({ ...connectionConfig(url, role, options.name), max: options.max ?? 10, idleTimeoutMillis: 30_000 });
   pool.on('error', () => undefined);
   pool.on('connect', (client) => client.on('error', () => undefined));
-  return new Kysely<DB>({ dialect: new PostgresDialect({ pool }) });
+  // A candidate's browser asks for the same few things again and again.
+  return new Kysely<DB>({ dialect: new PostgresDialect({ pool: role === 'fullfield_candidate' ? preparing(pool) : pool }) });
 }
 
 // On globalThis: a development server evaluates modules again and again, and bundles may hold this file twice.

@@ -8,6 +8,7 @@ type SaveRow = { now: Date; open: boolean; saved: { question: number; part: stri
 /**
  * Stores revisions of answers, durable before it returns. One statement: its WHERE is the end of time, the state and the epoch,
  * so nothing is asked before it. Sending a revision again is no error and stores nothing twice. `db` is the candidate's role.
+ * What was there before is looked up by its key, one row for one sent (LATERAL with LIMIT), however much the candidate has written.
  * The row is read FOR SHARE: a hand-in that goes on at the same moment waits, so no save slips in behind it.
  */
 export async function saveResponses(db: Kysely<DB>, seat: Seat, revisions: readonly Revision[]): Promise<SaveOutcome> {
@@ -30,7 +31,11 @@ export async function saveResponses(db: Kysely<DB>, seat: Seat, revisions: reado
       (select coalesce(json_agg(json_build_object('question', s.question, 'part', s.part, 'sequence', s.sequence)), '[]') from (
         select question, part, sequence from stored
         union
-        select r.question, r.part, r.sequence from response r join sent using (question, part, sequence, answer) where r.candidate_id = ${seat.candidateId}
+        select sent.question, sent.part, sent.sequence from sent cross join lateral (
+          select from response r
+          where r.candidate_id = ${seat.candidateId} and r.question = sent.question and r.part = sent.part and r.sequence = sent.sequence and r.answer = sent.answer
+          limit 1
+        ) there
       ) s) as saved`.execute(db);
   const row = rows[0];
   if (!row) throw new Error('The save statement returned no row.');
