@@ -67,7 +67,7 @@ function matchPrefix(plan: NumberPlan, value: Amount, keys: Keys, marking: Marki
     const right = matchKeys(plan, meant, keys, marking);
     if (right === null || right.flagged === true) continue;
     const cost = marking.unitCharged ? 0 : marking.policy.unitMistakeCosts;
-    const says = `What went wrong: the value is out by a factor of ${power > 0 ? '' : '1/'}10^${Math.abs(power)}, a prefix or unit mistake${marking.unitCharged ? ' that has cost its mark already' : ''}.`;
+    const says = `What went wrong: the value is 1${'\u202f000'.repeat(Math.abs(power) / 3)} times too ${power > 0 ? 'small' : 'large'}, a prefix or unit mistake${marking.unitCharged ? ' that has cost its mark already' : ''}.`;
     return { outcome: { ...right, awarded: Math.max(0, right.awarded - cost), verdict: 'misstep', rule: 'prefix', unitSlip: true, says }, meant };
   }
   return null;

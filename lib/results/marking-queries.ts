@@ -85,7 +85,7 @@ const openClaims = async (context: Context, sittingId: string): Promise<OpenClai
 const commonest = 3;
 
 /** How each part came out over all candidates: mean share of its marks, verdicts, commonest missteps. */
-export function itemsOf(marks: readonly Pick<MarkRow, 'question' | 'part' | 'of' | 'awarded' | 'verdict' | 'says'>[]): ItemRow[] {
+export function itemsOf(marks: readonly Pick<MarkRow, 'question' | 'part' | 'of' | 'awarded' | 'verdict' | 'says' | 'rule'>[]): ItemRow[] {
   type Counting = ItemRow & { sum: number; said: Map<string, number> };
   const items = new Map<string, Counting>();
   for (const mark of marks) {
@@ -96,7 +96,7 @@ export function itemsOf(marks: readonly Pick<MarkRow, 'question' | 'part' | 'of'
     item.answered += verdict === 'blank' ? 0 : 1;
     item.sum += mark.awarded;
     item.verdicts[verdict] = (item.verdicts[verdict] ?? 0) + 1;
-    if (verdict === 'misstep') item.said.set(mark.says, (item.said.get(mark.says) ?? 0) + 1);
+    if (verdict === 'misstep' && mark.rule !== 'person') item.said.set(mark.says, (item.said.get(mark.says) ?? 0) + 1);
     items.set(key, item);
   }
   return [...items.values()]
