@@ -16,7 +16,7 @@ function preparingClient(client: pg.PoolClient): PostgresPoolClient {
   };
   function query<Row>(text: string, values: readonly unknown[]): Promise<PostgresQueryResult<Row>>;
   function query<Row>(cursor: PostgresCursor<Row>): PostgresCursor<Row>;
-  function query<Row>(asked: string | PostgresCursor<Row>, values: readonly unknown[] = []) {
+  function query<Row>(asked: string | PostgresCursor<Row>, values: readonly unknown[] = []): Promise<PostgresQueryResult<Row>> | PostgresCursor<Row> {
     if (typeof asked !== 'string') throw new TypeError('No cursors on connections that prepare their statements.');
     return ask<Row>(asked, values);
   }
