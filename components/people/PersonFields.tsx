@@ -10,7 +10,7 @@ type FieldsOf<Fields extends FieldValues> = { register: UseFormRegister<Fields>;
 
 const roleSays = {
   instructor: 'Instructor: writes, schedules, marks',
-  student: 'Student: practises and sits',
+  student: 'Student: sits exams',
   proctor: 'Proctor: runs sittings in the room',
   registrar: 'Registrar: people, results, settings',
 } as const;

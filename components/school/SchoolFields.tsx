@@ -53,15 +53,6 @@ export function ExamFields(fields: Fields) {
   return (
     <Group title="Exams">
       <RadioGroup
-        label="Terminal letters"
-        options={[
-          { value: 'NEMA', label: 'NEMA (A1 A2, F1 F2, S1 S2)' },
-          { value: 'IEC', label: 'IEC 60034-8 (A1 A2, E1 E2, D1 D2)' },
-        ]}
-        error={says('terminalLetters')}
-        {...register('terminalLetters')}
-      />
-      <RadioGroup
         label="A number without its unit"
         options={[
           { value: 'read', label: 'Is read in the unit asked for' },
@@ -73,8 +64,8 @@ export function ExamFields(fields: Fields) {
       <div className="grid gap-5 sm:grid-cols-2">
         <TextInput label="Pass mark" unit="%" help="A new exam begins with it." {...figure('passPercent')} />
         <TextInput label="Least in each section" unit="%" help="0 where sections have no minimum." {...figure('sectionPercent')} />
-        <TextInput label="Decimals of a total" help="0, 1 or 2: whether 69.5 is a pass." {...figure('totalDecimals')} />
-        <TextInput label="Late arrival without loss" unit="seconds" {...figure('graceSeconds')} />
+        <TextInput label="Decimals of a total" help="0, 1 or 2, as shown; an exam states its own rounding." {...figure('totalDecimals')} />
+        <TextInput label="Answers after the end" help="Kept so long, for a person to decide." unit="seconds" {...figure('graceSeconds')} />
         <TextInput label="Candidates to a proctor" help="More than that is pointed out." {...figure('candidatesPerProctor')} />
       </div>
       <TextArea label="Declaration" help="What a candidate agrees to on the cover page." rows={4} error={says('declaration')} {...register('declaration')} id="declaration" />

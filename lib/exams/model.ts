@@ -95,10 +95,10 @@ export type VersionFacts = {
 };
 
 /** An exam as it begins: one empty section, the school's own rule and declaration. */
-export function emptyExam(school: { locale: ExamContent['locale']; passPercent: number; declaration: string; unitMissing: 'read' | 'lose' }): ExamContent {
+export function emptyExam(school: { locale: ExamContent['locale']; passPercent: number; sectionPercent: number; declaration: string; unitMissing: 'read' | 'lose' }): ExamContent {
   return {
     cover: { instructions: '', declaration: school.declaration },
-    sections: [{ title: '', instructions: '', leastPercent: null, items: [] }],
+    sections: [{ title: '', instructions: '', leastPercent: school.sectionPercent || null, items: [] }],
     blueprint: [],
     minutes: 0,
     passRule: { overallPercent: school.passPercent, rounding: 'none' },

@@ -11,7 +11,6 @@ export const schoolSettings = z.object({
   helpAddress: oneLine(200).default(''),
   senderName: oneLine(80).default(''),
   senderAddress: oneLine(200).default(''),
-  terminalLetters: z.enum(['NEMA', 'IEC']).default('NEMA'),
   passPercent: z.number().min(0).max(100).default(70),
   sectionPercent: z.number().min(0).max(100).default(0),
   totalDecimals: z.number().int().min(0).max(2).default(1),
