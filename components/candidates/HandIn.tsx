@@ -42,7 +42,7 @@ export function HandIn({ open, onClose, desk, view, outbox, go }: HandInProps) {
       {outbox.waiting > 0 && <Notice kind="wait">{outbox.waiting} {outbox.waiting === 1 ? 'answer is' : 'answers are'} not on the server yet; {view.contact ? 'they are sent first.' : 'there is no contact just now.'}</Notice>}
       {view.says && <Notice kind="stop" live>{view.says}</Notice>}
       <div className="dialog__do">
-        <Button size="exam" autoFocus onClick={onClose}>Go on working</Button>
+        <Button size="exam" data-first="true" onClick={onClose}>Go on working</Button>
         <Button size="exam" look="main" busy={view.busy} onClick={() => void desk.handIn().then((handed) => (handed ? onClose() : undefined))}>Hand in</Button>
       </div>
     </Modal>

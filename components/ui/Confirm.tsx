@@ -23,7 +23,7 @@ export function Confirm({ open, question, onAnswer, large }: { open: boolean; qu
       </p>
       {question.facts && <Pairs pairs={question.facts} />}
       <div className="dialog__do">
-        <Button size={size} autoFocus onClick={() => onAnswer(false)}>
+        <Button size={size} data-first="true" onClick={() => onAnswer(false)}>
           {question.keep ?? 'Go back'}
         </Button>
         <Button size={size} look={question.look === 'main' ? 'main' : 'stop-main'} onClick={() => onAnswer(true)}>

@@ -3,14 +3,21 @@
 import { useEffect, useId, useRef, type ReactNode } from 'react';
 import { Button } from './Button';
 
-/** The native `<dialog>`, opened as a modal by `open`; Escape and `onClose` shut it. Focus returns by itself. */
+/**
+ * The native `<dialog>`, opened as a modal by `open`; Escape and `onClose` shut it. Focus goes to what carries `data-first`, else to
+ * the first control, and returns by itself.
+ */
 export function Modal(props: { open: boolean; onClose: () => void; labelledBy: string; describedBy?: string; wide?: boolean; children: ReactNode }) {
   const { open, onClose } = props;
   const box = useRef<HTMLDialogElement>(null);
   useEffect(() => {
     const dialog = box.current;
     if (!dialog) return;
-    if (open && !dialog.open) dialog.showModal();
+    if (open && !dialog.open) {
+      dialog.showModal();
+      // React focuses what has autoFocus before the dialog is open, where nothing can have the focus.
+      dialog.querySelector<HTMLElement>('[data-first="true"]')?.focus();
+    }
     if (!open && dialog.open) dialog.close();
   }, [open]);
   return (

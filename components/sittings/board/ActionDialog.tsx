@@ -51,7 +51,7 @@ export function ActionDialog({ asking, act, onClose }: { asking: Asking; act: (a
         )}
         {trouble && <Notice kind="stop" live>{trouble}</Notice>}
         <div className="dialog__do">
-          <Button size="touch" onClick={onClose} autoFocus={!asking.words && !asking.minutes}>Go back</Button>
+          <Button size="touch" onClick={onClose} data-first={!asking.words && !asking.minutes}>Go back</Button>
           <Button size="touch" type="submit" look={asking.look === 'stop' ? 'stop-main' : 'main'} busy={busy}>{asking.verb}</Button>
         </div>
       </form>
