@@ -86,7 +86,7 @@ export function FindAll({ address }: { address: string }) {
       </button>
       <Dialog open={open} onClose={() => setOpen(false)} title="Search">
         <div ref={box} onKeyDown={onArrows}>
-          <input type="search" className="input" aria-label="Search for" autoFocus value={wanted} onChange={(event) => setWanted(event.target.value)} />
+          <input type="search" className="input" aria-label="Search for" data-first="true" value={wanted} onChange={(event) => setWanted(event.target.value)} />
           <Hits address={address} wanted={wanted} onGo={() => setOpen(false)} />
         </div>
       </Dialog>
