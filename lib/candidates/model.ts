@@ -47,7 +47,6 @@ export const revision = z.object({
   typedAt: z.number().int().nonnegative(),
 });
 export type Revision = z.infer<typeof revision>;
-export const mostRevisionsAtOnce = 100;
 
 export const flagChange = z.object({
   question: z.number().int().min(1).max(200),

@@ -1,5 +1,5 @@
 import type { RoomClient, SavedRevision } from './client';
-import { mostRevisionsAtOnce } from './model';
+import { mostRevisionsAtOnce } from './limits';
 import type { KeptEntry } from './vault';
 
 export type AnswerState = 'blank' | 'saved' | 'sending' | 'kept here';

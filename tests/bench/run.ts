@@ -63,6 +63,7 @@ async function main(): Promise<void> {
   const draw = measureDraw();
   tell('Saves; half a minute or more');
   const save = await saves();
+  tell(`${save.saves.toFixed(0)} saves a second, ${save.bare.toFixed(0)} bare requests`);
   tell('Starts, and the exam room in a browser; the first start loads the demo');
   const { seconds, scripts } = await startAndScripts();
   const start = seconds[1] ?? NaN;

@@ -33,7 +33,7 @@ async function load(url: string, seconds: number, { path, cookie, body, answered
 const median = (values: readonly number[]): number => [...values].sort((a, b) => a - b)[Math.floor(values.length / 2)] ?? NaN;
 
 /** Measures on `installation`, whose database is empty; makes a sitting that runs in it. Throws where an acknowledged save is not in the database. */
-export async function measureSaves(installation: Installation, turns = 5, seconds = 4): Promise<SaveMeasure> {
+export async function measureSaves(installation: Installation, turns = 8, seconds = 3): Promise<SaveMeasure> {
   await prepareTemplate(installation.databaseUrl);
   const owner = openDatabase(installation.databaseUrl, undefined, { max: 2 });
   const app = openDatabase(installation.databaseUrl, 'fullfield_app', { max: 2 });

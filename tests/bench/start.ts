@@ -34,10 +34,13 @@ export async function runStart(dataDir: string): Promise<Served> {
   const port = await freePort();
   const url = `http://127.0.0.1:${port}`;
   const began = performance.now();
-  const child = spawn('npm', ['start'], { cwd: root, env: plainEnvironment({ PORT: String(port), DATA_DIR: dataDir }), stdio: ['ignore', 'pipe', 'pipe'] });
-  const gone = new Promise<void>((resolve) => child.once('exit', () => resolve()));
+  const child = spawn('npm', ['start'], { cwd: root, env: plainEnvironment({ PORT: String(port), DATA_DIR: dataDir }), stdio: ['ignore', 'pipe', 'pipe'], detached: true });
+  // npm ends before what it started: all of it is gone when nobody holds its output any more.
+  const gone = new Promise<void>((resolve) => child.once('close', () => resolve()));
   const stop = async () => {
-    child.kill('SIGTERM');
+    if (child.exitCode !== null) return;
+    // To the whole group, as Ctrl-C in a window does: npm does not hand a signal of its own on.
+    process.kill(-(child.pid ?? 0), 'SIGINT');
     await gone;
   };
   try {

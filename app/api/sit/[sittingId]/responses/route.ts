@@ -1,5 +1,6 @@
 import { z } from 'zod';
-import { mostRevisionsAtOnce, revision } from '@/lib/candidates/model';
+import { mostRevisionsAtOnce } from '@/lib/candidates/limits';
+import { revision } from '@/lib/candidates/model';
 import { saveResponses } from '@/lib/candidates/save';
 import { postSaved } from '@/lib/live/post';
 import { answer, noSeat, refusal, roomDb, seatOf, unreadable } from '../seat';
