@@ -80,7 +80,9 @@ export function CandidatePanel(props: PanelProps) {
   const signal = signalOf(seat, now);
   const panel = useRef<HTMLElement>(null);
   // On a tablet the panel lies beneath the seats.
-  useEffect(() => panel.current?.scrollIntoView({ block: 'nearest' }), [seat.candidateId]);
+  useEffect(() => {
+    void panel.current?.scrollIntoView({ block: 'nearest' });
+  }, [seat.candidateId]);
   return (
     <aside ref={panel} className="sheet side" aria-label={`Candidate ${seat.name}`}>
       <div className="side__top"><span className="mono soft">{seat.seat || 'no seat'}</span>{seat.need && <span className="need">{seat.need}</span>}</div>
