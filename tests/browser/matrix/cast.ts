@@ -133,7 +133,7 @@ export async function makeCast(url: string, databaseUrl: string): Promise<Cast> 
   const { registrar, instructor, student } = people;
   const { settings } = await readSchool(db);
   const today = localDay(await readClock(db), settings);
-  const { id: termId } = valueOf(await saveTerm(registrar.context, null, { name: `${secret} ${randomUUID().slice(0, 8)}`, startsOn: today, endsOn: '2099-12-31' }));
+  const { id: termId } = valueOf(await saveTerm(registrar.context, null, { name: `Term ${randomUUID().slice(0, 8)}`, startsOn: today, endsOn: '2099-12-31' }));
   const bystander = await newPerson(registrar, ['student'], { name: `${secret} bystander`, email: `bystander-${randomUUID()}@matrix.test`, learnerNumber: `MX-${randomUUID().slice(0, 8)}` });
   const { id: formId } = await db.selectFrom('form').select('id').orderBy('approved_at').limit(1).executeTakeFirstOrThrow();
   const { id: classId } = valueOf(await saveClass(registrar.context, null, { termId, name: `MX-${randomUUID().slice(0, 8)}`, title: secret, instructorIds: [instructor.id] }));
