@@ -98,6 +98,6 @@ export const openHandlers: Record<string, number> = {
   'GET /api/health': 200,
   'GET /api/auth/[...nextauth]': 200,
   'POST /api/auth/[...nextauth]': 400,
-  'POST /api/bare': 404,
+  'POST /api/bare': 200,
   'GET /mail/[mailId]/files/[place]': 404,
 };
