@@ -78,6 +78,7 @@ async function main(): Promise<void> {
     table(lines, [
       `Draws with keys a second: ${draw.engine.toFixed(0)} by the engine, ${draw.plain.toFixed(0)} by the plain function`,
       `Requests a second over 10 connections: ${save.saves.toFixed(0)} durable saves, ${save.bare.toFixed(0)} bare; the save's statement alone by pgbench: ${save.statement.toFixed(0)}`,
+      `Time of the processor in the server process a request: ${save.work.save.toFixed(2)} ms for a save, ${save.work.bare.toFixed(2)} ms bare`,
       `Exam room: ${scripts.files} scripts, ${(scripts.bytes / 1000).toFixed(0)} kB before gzip`,
       `Starts: ${seconds.map((one) => one.toFixed(1)).join(', ')} s`,
     ]);
