@@ -71,10 +71,12 @@ function Part({ part, notation, answering }: { part: QuestionPart; notation: Not
 
 /** One question as a candidate sees it: plate, stem, parts with their answers, and the safety line. */
 export function QuestionSheet({ question, place, notation, answering, headingId }: QuestionSheetProps) {
+  // In the room the question is the page; looked at by staff it stands under the page's own heading.
+  const Heading = headingId ? 'h1' : 'h2';
   return (
     <>
       <div className="q__head">
-        <h1 id={headingId} tabIndex={-1}>Question {place.number}</h1>
+        <Heading id={headingId} tabIndex={-1}>Question {place.number}</Heading>
         <span>
           of {place.of} · {marksInWords(question.marks)} · about {question.minutes} minutes{place.section ? ` · ${place.section}` : ''}
         </span>

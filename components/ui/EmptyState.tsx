@@ -4,7 +4,7 @@ import type { ReactNode } from 'react';
 export function EmptyState({ title, says, children }: { title: string; says: ReactNode; children?: ReactNode }) {
   return (
     <div className="empty">
-      <h3>{title}</h3>
+      <h2>{title}</h2>
       <p>{says}</p>
       {children && <div className="btn-row">{children}</div>}
     </div>
