@@ -38,10 +38,10 @@ export function OwnPaper({ paper, sat, print, sentence }: Props) {
       <div className="mt-8 grid grid-cols-[minmax(0,1fr)] gap-6">
         {paper.questions.map((marked) => (
           <MarkedQuestion key={marked.number} marked={marked} words={{ answer: 'Your answer', rule: false }}>
-            <section className="section section--cap" aria-labelledby={`solution-${marked.number}`}>
+            <div className="section section--cap">
               <h2 id={`solution-${marked.number}`}>Solution in your numbers</h2>
               <div className="overflow-x-auto pt-3" role="region" aria-label={`Solution of question ${marked.number}, scrolls sideways`} tabIndex={0}><MathText html={marked.solutionHtml} /></div>
-            </section>
+            </div>
           </MarkedQuestion>
         ))}
       </div>
