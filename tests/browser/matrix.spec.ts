@@ -7,15 +7,20 @@ import { addressOf, askAction, askHandler, askPage, builtActions, type Outcome }
 import { type Cast, makeCast, secret, type Things } from './matrix/cast';
 import { everybody, type Gate, handlers, openHandlers, pages, peopleOf, seatHandlers, type Who } from './matrix/table';
 import { seatCookieOf } from '../support/running-room';
+import { closeDatabase, trueTime } from './support/database';
 
 test.setTimeout(600_000);
 
 let cast: Cast;
 const url = process.env.FULLFIELD_URL ?? '';
 test.beforeAll(async () => {
+  await trueTime();
   cast = await makeCast(url, process.env.DATABASE_URL ?? '');
 });
-test.afterAll(async () => cast?.close());
+test.afterAll(async () => {
+  await closeDatabase();
+  await cast?.close();
+});
 
 async function files(name: string): Promise<string[]> {
   const entries = await fs.readdir(path.join(root, 'app'), { recursive: true, withFileTypes: true });

@@ -15,7 +15,10 @@ export async function closeDatabase(): Promise<void> {
 /** Moves the installation's clock on by so many minutes. */
 export const pass = (minutes: number): Promise<unknown> => sql`update app.installation set clock_shift = clock_shift + make_interval(mins => ${minutes})`.execute(database());
 
-/** Gives the installation the true time again. */
-export const trueTime = (): Promise<unknown> => sql`update app.installation set clock_shift = '0'`.execute(database());
+/** Gives the installation the true time again; waits that were given out in the shifted time would last for hours. */
+export async function trueTime(): Promise<void> {
+  await sql`update app.installation set clock_shift = '0'`.execute(database());
+  await database().deleteFrom('sign_in_delay').execute();
+}
 
 export const serverNow = (): Promise<Date> => readClock(database());
